@@ -1,0 +1,93 @@
+// A sized antenna with what is predicted of it: the record between sizing and artwork.
+
+import type { Notice } from '../errors.ts';
+
+/** Which of the frequencies that people call "resonance" a number is.
+ *  bare: real part of the complex pole of the patch without a feed;
+ *  loadedPole: the same with feed and generator; bestMatch: least reflection at the feed. */
+export type ResonanceKind = 'bare' | 'loadedPole' | 'bestMatch';
+
+export interface RectangularRadiator {
+  readonly family: 'rectangular';
+  /** The resonant dimension, along y [m]. */
+  readonly lengthM: number;
+  /** Along x [m]. */
+  readonly widthM: number;
+}
+
+export interface InsetFeed {
+  readonly kind: 'inset';
+  readonly lineWidthM: number;
+  readonly lineWidthInNotchM: number;
+  /** From the patch's front edge to the end of the notch [m]; 0 is a plain edge feed. */
+  readonly insetDepthM: number;
+  /** Clear space on each side of the line within the notch [m]. */
+  readonly notchGapM: number;
+  /** From the board's edge to the patch's front edge [m]. */
+  readonly lineLengthM: number;
+}
+
+export interface BoardSize {
+  readonly widthM: number;
+  readonly lengthM: number;
+  readonly cornerRadiusM: number;
+}
+
+/** One cause's part of the interval: half its width at three sigma [Hz]. */
+export interface Contribution {
+  readonly cause: string;
+  readonly halfWidthHz: number;
+}
+
+export interface Prediction {
+  readonly method: 'closed-form';
+  readonly resonanceHz: number;
+  readonly resonanceKind: ResonanceKind;
+  readonly resonanceLowHz: number;
+  readonly resonanceHighHz: number;
+  /** Largest first. */
+  readonly contributions: readonly Contribution[];
+  /** Natural resonance of the same rectangle without feed [Hz]. */
+  readonly bareResonanceHz: number;
+  /** With this feed, at bandwidthVswr; null where the match never reaches it or there is no feed. */
+  readonly bandwidthHz: number | null;
+  readonly bandwidthVswr: number;
+  /** (S−1)/(Q√S)·f: what a critically coupled feed would give [Hz]. */
+  readonly bandwidthCriticalHz: number;
+  /** Resistance at the radiating edge of the bare patch, loss included [Ω]. */
+  readonly edgeResistanceOhm: number;
+  /** Greatest resistance that the feed sees at the inset's end [Ω]; null without a feed. */
+  readonly inputResistanceOhm: number | null;
+  readonly returnLossAtCentreDb: number | null;
+  readonly returnLossWorstInBandDb: number | null;
+  /** Unloaded. */
+  readonly qualityTotal: number;
+  readonly qualityRadiation: number;
+  readonly qualityDielectric: number | null;
+  readonly qualityConductor: number | null;
+  readonly qualitySurfaceWave: number | null;
+  readonly qualityLoaded: number | null;
+  readonly radiationEfficiency: number;
+  readonly directivityDbi: number;
+  readonly gainDbi: number;
+  /** With mismatch and feed line at band centre; null without a feed. */
+  readonly gainRealizedDbi: number | null;
+}
+
+/** A wish of the brief held against the prediction. */
+export interface Requirement {
+  readonly name: string;
+  readonly wanted: string;
+  readonly predicted: string;
+  readonly holds: boolean;
+}
+
+export interface PatchDesign {
+  readonly kind: 'patch-design';
+  readonly radiator: RectangularRadiator;
+  readonly feed: InsetFeed;
+  readonly board: BoardSize;
+  readonly prediction: Prediction;
+  readonly requirement: readonly Requirement[];
+  readonly notices: readonly Notice[];
+}

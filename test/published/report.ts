@@ -1,0 +1,46 @@
+// Prints every published row beside what the engine predicts: `npm run report`.
+
+import { fedRows, isInset, measuredRows, qualityRows, resonanceRows, summarise } from './tables.ts';
+
+function percent(error: number, digits = 2): string {
+  return `${error >= 0 ? '+' : ''}${(100 * error).toFixed(digits)} %`.padStart(10);
+}
+
+function print(line: string): void {
+  process.stdout.write(`${line}\n`);
+}
+
+function table(title: string, rows: readonly { name: string; ours: number; reference: number; error: number }[]): void {
+  print(`\n${title}`);
+  for (const row of rows)
+    print(
+      `  ${row.name.padEnd(34)} ${row.ours.toFixed(4).padStart(10)} ${row.reference.toFixed(4).padStart(10)} ${percent(row.error)}`,
+    );
+  const { mean, worst } = summarise(rows);
+  print(`  mean ${percent(mean)}   worst ${percent(worst)}`);
+}
+
+table('Natural resonance [GHz], ours and reference (computed, resonance_reference.csv)', resonanceRows());
+table('Lossless Q, ours and reference (computed, resonance_reference.csv)', qualityRows());
+table(
+  'Measured natural resonance [GHz], ours and measured (values from memory; nothing is fitted to them)',
+  measuredRows(),
+);
+
+print('\nFed patches (computed, fed_reference.json): errors against the reference');
+print(
+  '  case            best match   textbook      pole  loaded Q    peak R  R at match   return loss (ours / reference)',
+);
+const fed = fedRows();
+for (const row of fed) {
+  const [ours, reference] = row.returnLossDb;
+  print(
+    `  ${row.name.padEnd(14)}${percent(row.bestMatch.error)}${percent(row.textbookError)}${percent(row.pole.error)}${percent(row.loadedQuality.error, 1)}${percent(row.peakResistance.error, 1)}${percent(row.matchResistance.error, 1)}     ${ours.toFixed(1)} / ${reference.toFixed(1)} dB`,
+  );
+}
+const insets = fed.filter(isInset);
+const match = summarise(insets.map(({ bestMatch }) => bestMatch));
+const resistance = summarise(insets.map(({ peakResistance }) => peakResistance));
+print(
+  `  insets of 0.15–0.4 L: best match mean ${percent(match.mean)}, worst ${percent(match.worst)}; resistance worst ${percent(resistance.worst, 1)}`,
+);

@@ -47,25 +47,34 @@ export interface BareMode {
 
 /** Coefficients of the network. */
 export interface InsetLaw {
-  /** Spreading inductance over μ0 h/π: slope · ln(W/w) + offset. */
-  readonly spreadingSlope: number;
-  readonly spreadingOffset: number;
-  /** Share of an undivided strip's current that would flow where the line is: (w + gap·g + height·h)/W. */
+  /** Spreading inductance over μ0 h/π: aspect · ln(W/w) + height · ln(h/w) + slab/εr + constant. */
+  readonly spreadingAspect: number;
+  readonly spreadingHeight: number;
+  readonly spreadingSlab: number;
+  readonly spreadingConstant: number;
+  /** Share of an undivided strip's current that line and notch interrupt: (line·w + gap·g + height·h)/W. */
+  readonly shareLine: number;
   readonly shareGap: number;
   readonly shareHeight: number;
-  /** Open-end extension and quality over those of the bare patch, as the feed sees them. */
+  /** Open-end extension, quality and admittance level over those of the bare patch, as the feed sees them. */
   readonly extension: number;
   readonly quality: number;
+  readonly admittance: number;
 }
 
-/** Fitted to fixtures/published/fed_reference.json. */
+/** Fitted to fixtures/published/fed_reference.json: 24 cases on four boards, seven figures each. METHODS.md tells how
+ *  and with which residuals; inset-range.ts holds the box. */
 export const INSET_LAW: InsetLaw = {
-  spreadingSlope: 0.974,
-  spreadingOffset: -1.08,
-  shareGap: 1.886,
-  shareHeight: -1.724,
-  extension: 2.324,
-  quality: 1.188,
+  spreadingAspect: 0.443,
+  spreadingHeight: 1.397,
+  spreadingSlab: 2.803,
+  spreadingConstant: 0.262,
+  shareLine: 1.115,
+  shareGap: 2.441,
+  shareHeight: -1.965,
+  extension: 2.046,
+  quality: 1.09,
+  admittance: 0.925,
 };
 
 /** Two rows of a 2 × 2 matrix: a b / c d. */
@@ -161,16 +170,17 @@ interface PairState {
 }
 
 /** Carries voltages and currents from the inset's end to the front edge.
+ *  @param level  factor on the pair's admittances
  *  V(0) = cos V(y) + j (sin/√ε) cL I(y),  I(0) = cosᵀ I(y) + j (sin/√ε)ᵀ cC V(y), as functions of the matrix C0⁻¹C. */
-function toFrontEdge(pair: PairModes, thetas: readonly [Complex, Complex], end: PairState): PairState {
+function toFrontEdge(pair: PairModes, level: number, thetas: readonly [Complex, Complex], end: PairState): PairState {
   const cos = onModes(pair.projector, cosine(thetas[0]), cosine(thetas[1]));
   const sin = onModes(
     pair.projector,
     scale(sine(thetas[0]), 1 / pair.index[0]),
     scale(sine(thetas[1]), 1 / pair.index[1]),
   );
-  const l = pair.inductiveOhm;
-  const c = pair.capacitiveS;
+  const l = map(pair.inductiveOhm, 1 / level);
+  const c = map(pair.capacitiveS, level);
   const fluxLine = add(scale(end.lineI, l.a), scale(end.flankI, l.b));
   const fluxFlank = add(scale(end.lineI, l.c), scale(end.flankI, l.d));
   const chargeLine = add(scale(end.lineV, c.a), scale(end.flankV, c.b));
@@ -208,19 +218,24 @@ export function frontEdgeImpedance(
   const widthM = depthM > 0 ? feed.lineWidthInNotchM : feed.lineWidthM;
   const gapM = feed.notchGapM * (1 - bare);
   const openShare = Math.max(0, 1 - (widthM + 2 * gapM + bare * h) / w);
-  const lineShare = Math.min(1, Math.max(0, (widthM + law.shareGap * gapM + law.shareHeight * h) / w));
+  const lineShare = Math.min(1, Math.max(0, (law.shareLine * widthM + law.shareGap * gapM + law.shareHeight * h) / w));
   const flankShare = 1 - lineShare;
-  const spreading = Math.max(0, law.spreadingSlope * Math.log(w / widthM) + law.spreadingOffset);
+  const spreading = Math.max(
+    0,
+    law.spreadingAspect * Math.log(w / widthM) +
+      law.spreadingHeight * Math.log(h / widthM) +
+      law.spreadingSlab / patch.permittivity +
+      law.spreadingConstant,
+  );
   const spreadingH = ((MU0_H_PER_M * h) / Math.PI) * spreading;
+  const patchAdmittanceS = section.patchAdmittanceS * law.admittance;
   const perHz = Math.PI / (patch.lengthM + 2 * extensionM) / mode.resonanceHz;
   const lossy = complex(perHz, -perHz / (2 * mode.quality * law.quality));
   return (frequency) => {
     const wavenumber = multiply(frequency, lossy);
     const openEnd = tangent(scale(wavenumber, extensionM));
-    const flankEnd = timesJ(scale(openEnd, section.patchAdmittanceS * openShare));
-    const behind = timesJ(
-      scale(tangent(scale(wavenumber, patch.lengthM - depthM + extensionM)), section.patchAdmittanceS),
-    );
+    const flankEnd = timesJ(scale(openEnd, patchAdmittanceS * openShare));
+    const behind = timesJ(scale(tangent(scale(wavenumber, patch.lengthM - depthM + extensionM)), patchAdmittanceS));
     const common = divide(complex(1), behind);
     const spread = timesJ(scale(frequency, 2 * Math.PI * spreadingH));
     const mutual = add(common, scale(spread, -lineShare * flankShare));
@@ -241,8 +256,8 @@ export function frontEdgeImpedance(
     if (pair !== null) {
       const theta = scale(wavenumber, depthM / section.patchIndex);
       const thetas = [scale(theta, pair.index[0]), scale(theta, pair.index[1])] as const;
-      u = toFrontEdge(pair, thetas, u);
-      v = toFrontEdge(pair, thetas, v);
+      u = toFrontEdge(pair, law.admittance, thetas, u);
+      v = toFrontEdge(pair, law.admittance, thetas, v);
     }
     // The flanks' front ends are open: I + Y V = 0 fixes how much of the second solution is needed.
     const share = divide(

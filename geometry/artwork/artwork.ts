@@ -51,4 +51,6 @@ export interface Artwork {
   readonly holes: readonly Hole[];
   readonly launches: readonly LaunchEdge[];
   readonly dimensions: readonly Dimension[];
+  /** What could not be drawn as wished, as whole sentences. */
+  readonly remarks: readonly string[];
 }

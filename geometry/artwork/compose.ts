@@ -10,6 +10,7 @@
 
 import type { Brief } from '../brief/brief.ts';
 import { refuse } from '../errors.ts';
+import { demandRoom } from '../patch/board-room.ts';
 import type { PatchDesign } from '../patch/design.ts';
 import { cleanRing, intersection } from '../shape/boolean.ts';
 import { contourOf, rectangle } from '../shape/primitives.ts';
@@ -63,6 +64,7 @@ function millimetres(nm: number): string {
 
 function layOut({ brief, design }: ComposeInput): Layout {
   const { radiator, feed, board } = design;
+  demandRoom(radiator, feed, board, brief.fabricator.copperToEdgeM);
   const front = toNm(feed.lineLengthM);
   const halfPatch = half(radiator.widthM);
   const back = front + toNm(radiator.lengthM);
@@ -92,38 +94,8 @@ function layOut({ brief, design }: ComposeInput): Layout {
   return layout;
 }
 
-/** What cannot be drawn is refused with the field and what would do. */
+/** A notch or a launch that cannot be drawn is refused with the field and what would do. */
 function demand(l: Layout): void {
-  const needWidth = 2 * (l.halfPatch + l.pullBack);
-  if (l.boardWidth < needWidth) {
-    refuse({
-      code: 'board.small',
-      path: 'board.width',
-      value: millimetres(l.boardWidth),
-      problem: `a board ${millimetres(l.boardWidth)} wide does not hold the patch of ${millimetres(2 * l.halfPatch)}`,
-      allowed: `allowed is ${millimetres(needWidth)} or more`,
-    });
-  }
-  const needLength = l.back + l.pullBack;
-  if (l.boardLength < needLength || l.front < l.pullBack) {
-    const patch = l.back - l.front;
-    refuse({
-      code: 'board.small',
-      path: 'board.length',
-      value: millimetres(l.boardLength),
-      problem: `a board ${millimetres(l.boardLength)} long does not hold the patch of ${millimetres(patch)} and a feed line of ${millimetres(l.front)}`,
-      allowed: `allowed is ${millimetres(Math.max(needLength, patch + 2 * l.pullBack))} or more, with a feed line of ${millimetres(l.pullBack)} or more`,
-    });
-  }
-  if (2 * l.cornerRadius > Math.min(l.boardWidth, l.boardLength)) {
-    refuse({
-      code: 'board.cornerRadius',
-      path: 'board.cornerRadius',
-      value: millimetres(l.cornerRadius),
-      problem: `corners of ${millimetres(l.cornerRadius)} do not fit the board`,
-      allowed: `allowed is half the shorter side, ${millimetres(Math.min(l.boardWidth, l.boardLength) / 2)}, or less`,
-    });
-  }
   if (l.depth > 0) {
     const outer = l.halfInNotch + l.gap;
     if (l.halfLine >= outer || l.gap <= 0) {

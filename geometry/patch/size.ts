@@ -8,8 +8,9 @@ import { complex } from '../numeric/complex.ts';
 import { findMinimum } from '../numeric/search.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units.ts';
 import { bareResonance, type PatchOnSlab } from './bare-resonance.ts';
-import type { InsetFeed, PatchDesign, RectangularRadiator } from './design.ts';
-import { crossSectionOf, type FedPatch, feedLine, impedanceAtFrontEdge } from './inset-feed.ts';
+import { demandRoom } from './board-room.ts';
+import type { BoardSize, InsetFeed, PatchDesign, RectangularRadiator } from './design.ts';
+import { crossSectionOf, type FedPatch, feedLine, impedanceAtConnector } from './inset-feed.ts';
 import type { InsetCrossSection } from './inset-network.ts';
 import { bestMatch, reflection } from './match.ts';
 import { predictInset } from './predict-inset.ts';
@@ -53,7 +54,23 @@ function patchOf(frame: Frame, lengthM: number): PatchOnSlab {
   };
 }
 
-/** The patch with its feed, for a length and an inset depth; the line's own length plays no part in the match. */
+/** Laminate beyond the patch: as wished, or six heights and 0.06 wavelengths, rounded up to a tenth of a millimetre. */
+function marginOf(brief: Brief, centreHz: number): number {
+  if (brief.board.marginM !== 'auto') return brief.board.marginM;
+  const wavelength = SPEED_OF_LIGHT_M_PER_S / centreHz;
+  const least = Math.max(MARGIN_OVER_HEIGHT * brief.laminate.thicknessM, MARGIN_OVER_WAVELENGTH * wavelength);
+  return Math.ceil(least * 1e4) / 1e4;
+}
+
+/** From the board's edge to the patch: pinned, or the margin, or what centres the patch on a board of given length. */
+function lineLengthFor(brief: Brief, centreHz: number, patchLengthM: number): number {
+  const { pinned } = brief.feed;
+  if (pinned.lineLengthM !== undefined) return pinned.lineLengthM;
+  if (brief.board.lengthM === undefined) return marginOf(brief, centreHz);
+  return rounded((brief.board.lengthM - patchLengthM) / 2);
+}
+
+/** The patch with its feed, for a length and an inset depth. */
 function fedPatch(frame: Frame, lengthM: number, insetDepthM: number): FedPatch {
   const { laminate } = frame.brief;
   const patch = patchOf(frame, lengthM);
@@ -68,7 +85,7 @@ function fedPatch(frame: Frame, lengthM: number, insetDepthM: number): FedPatch 
       lineWidthInNotchM: frame.lineWidthInNotchM,
       notchGapM: frame.notchGapM,
       insetDepthM,
-      lineLengthM: 0,
+      lineLengthM: lineLengthFor(frame.brief, frame.centreHz, lengthM),
     },
     section: frame.section,
     line: feedLine(laminate, frame.lineWidthM, frame.centreHz),
@@ -77,7 +94,7 @@ function fedPatch(frame: Frame, lengthM: number, insetDepthM: number): FedPatch 
 
 function bestMatchOf(frame: Frame, lengthM: number, insetDepthM: number) {
   const fed = fedPatch(frame, lengthM, insetDepthM);
-  return bestMatch(impedanceAtFrontEdge(fed), frame.brief.match.referenceOhm, fed.mode.resonanceHz);
+  return bestMatch(impedanceAtConnector(fed), frame.brief.match.referenceOhm, fed.mode.resonanceHz);
 }
 
 /** The length whose best match, at an inset of a given share of it or of a given depth, lies at band centre. */
@@ -101,7 +118,7 @@ function solveTogether(
 ): { readonly lengthM: number; readonly depthM: number } | null {
   const reference = frame.brief.match.referenceOhm;
   const gammaAt = (lengthM: number, depthM: number) =>
-    reflection(impedanceAtFrontEdge(fedPatch(frame, lengthM, depthM))(complex(frame.centreHz)), reference);
+    reflection(impedanceAtConnector(fedPatch(frame, lengthM, depthM))(complex(frame.centreHz)), reference);
   let length = guessLengthM;
   let depth = guessDepthM;
   for (let i = 0; i < 30; i++) {
@@ -230,22 +247,15 @@ function frameOf(brief: Brief, notices: Notice[]): Frame {
   return { brief, centreHz, widthM, lineWidthM: line, lineWidthInNotchM: inNotch, notchGapM: gap, section };
 }
 
-function sizeBoard(brief: Brief, radiator: RectangularRadiator, centreHz: number) {
+function sizeBoard(brief: Brief, radiator: RectangularRadiator, centreHz: number): BoardSize {
   const wish = brief.board;
-  const auto =
-    Math.ceil(
-      Math.max(
-        MARGIN_OVER_HEIGHT * brief.laminate.thicknessM,
-        (MARGIN_OVER_WAVELENGTH * SPEED_OF_LIGHT_M_PER_S) / centreHz,
-      ) * 1e4,
-    ) / 1e4;
-  const margin = wish.marginM === 'auto' ? auto : wish.marginM;
-  const pinnedLine = brief.feed.pinned.lineLengthM;
-  const widthM = wish.widthM ?? rounded(radiator.widthM + 2 * margin);
-  const lineLengthM =
-    pinnedLine ?? (wish.lengthM === undefined ? margin : rounded((wish.lengthM - radiator.lengthM) / 2));
-  const lengthM = wish.lengthM ?? rounded(lineLengthM + radiator.lengthM + margin);
-  return { board: { widthM, lengthM, cornerRadiusM: wish.cornerRadiusM }, lineLengthM };
+  const margin = marginOf(brief, centreHz);
+  const line = lineLengthFor(brief, centreHz, radiator.lengthM);
+  return {
+    widthM: wish.widthM ?? rounded(radiator.widthM + 2 * margin),
+    lengthM: wish.lengthM ?? rounded(line + radiator.lengthM + margin),
+    cornerRadiusM: wish.cornerRadiusM,
+  };
 }
 
 /** Sizes the antenna around what the brief pins, and predicts what the rounded copper does.
@@ -265,15 +275,16 @@ export function sizePatch(brief: Brief): PatchDesign {
     });
   }
   const radiator: RectangularRadiator = { family: 'rectangular', lengthM, widthM: frame.widthM };
-  const { board, lineLengthM } = sizeBoard(brief, radiator, frame.centreHz);
+  const board = sizeBoard(brief, radiator, frame.centreHz);
   const feed: InsetFeed = {
     kind: 'inset',
     lineWidthM: frame.lineWidthM,
     lineWidthInNotchM: frame.lineWidthInNotchM,
     insetDepthM: depthM,
     notchGapM: frame.notchGapM,
-    lineLengthM,
+    lineLengthM: lineLengthFor(brief, frame.centreHz, lengthM),
   };
+  demandRoom(radiator, feed, board, brief.fabricator.copperToEdgeM);
   const predicted = predictInset(brief, radiator, feed, board, frame.section);
   return {
     kind: 'patch-design',

@@ -1,0 +1,56 @@
+// Whether a board holds its antenna.
+
+import { refuse } from '../errors.ts';
+import { toNm } from '../units.ts';
+import type { BoardSize, InsetFeed, RectangularRadiator } from './design.ts';
+
+function millimetres(nm: number): string {
+  return `${nm / 1e6} mm`;
+}
+
+/** Refuses a board that does not hold patch and feed line with the fabricator's distance to its edge.
+ *  Compared in whole nanometres, as they are drawn.
+ *  Throws: EngineError "board.small", "board.cornerRadius". */
+export function demandRoom(
+  radiator: RectangularRadiator,
+  feed: InsetFeed,
+  board: BoardSize,
+  copperToEdgeM: number,
+): void {
+  const edge = toNm(copperToEdgeM);
+  const patchWidth = toNm(radiator.widthM);
+  const patchLength = toNm(radiator.lengthM);
+  const width = toNm(board.widthM);
+  const length = toNm(board.lengthM);
+  const line = toNm(feed.lineLengthM);
+  const needWidth = patchWidth + 2 * edge;
+  if (width < needWidth) {
+    refuse({
+      code: 'board.small',
+      path: 'board.width',
+      value: millimetres(width),
+      problem: `a board ${millimetres(width)} wide does not hold the patch of ${millimetres(patchWidth)}`,
+      allowed: `allowed is ${millimetres(needWidth)} or more`,
+    });
+  }
+  if (length < line + patchLength + edge || line < edge) {
+    const least = Math.max(line + patchLength + edge, patchLength + 2 * edge);
+    refuse({
+      code: 'board.small',
+      path: 'board.length',
+      value: millimetres(length),
+      problem: `a board ${millimetres(length)} long does not hold the patch of ${millimetres(patchLength)} and its feed line`,
+      allowed: `allowed is ${millimetres(least)} or more, of which the feed line takes ${millimetres(edge)} or more`,
+    });
+  }
+  const corner = toNm(board.cornerRadiusM);
+  if (2 * corner > Math.min(width, length)) {
+    refuse({
+      code: 'board.cornerRadius',
+      path: 'board.cornerRadius',
+      value: millimetres(corner),
+      problem: `corners of ${millimetres(corner)} do not fit the board`,
+      allowed: `allowed is half the shorter side, ${millimetres(Math.min(width, length) / 2)}, or less`,
+    });
+  }
+}

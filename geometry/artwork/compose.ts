@@ -9,23 +9,19 @@
 //            └──────────┴─────┴──────────┘ → x,  launch edge y = 0
 
 import type { Brief } from '../brief/brief.ts';
-import { refuse } from '../errors.ts';
-import { demandRoom } from '../patch/board-room.ts';
 import type { PatchDesign } from '../patch/design.ts';
 import { cleanRing, intersection } from '../shape/boolean.ts';
 import { contourOf, rectangle } from '../shape/primitives.ts';
 import { type Contour, type Edge, type PointNm, point, type Region, type Shape } from '../shape/shape.ts';
 import { toNm } from '../units.ts';
 import type { Artwork, Dimension, LaunchEdge } from './artwork.ts';
+import { type Layout, layOut } from './layout.ts';
 import { composeLegend } from './legend-place.ts';
 import { boardOutline } from './outline.ts';
 import { slugOf } from './slug.ts';
 
 /** Mask opening beyond radiator and feed [nm]: room for the mask's own misplacement, so that none lies on them. */
 const MASK_RELIEF_NM = 200_000;
-/** Ground kept up to the board's edge on either side of the line: five heights, and room for a connector's legs. */
-const LAUNCH_OVER_HEIGHT = 5;
-const LAUNCH_LEAST_NM = 6_000_000;
 /** Depth of the bare ground at the launch, for soldering a connector's legs [nm]. */
 const SOLDER_DEPTH_NM = 5_000_000;
 
@@ -33,90 +29,6 @@ export interface ComposeInput {
   readonly brief: Brief;
   readonly design: PatchDesign;
   readonly buildId: string;
-}
-
-/** All lengths in whole nanometres; widths as halves, so that both sides of the axis are the same. */
-export interface Layout {
-  readonly boardWidth: number;
-  readonly boardLength: number;
-  readonly cornerRadius: number;
-  /** Axis of the antenna. */
-  readonly axis: number;
-  readonly halfPatch: number;
-  readonly front: number;
-  readonly back: number;
-  readonly halfLine: number;
-  readonly halfInNotch: number;
-  readonly gap: number;
-  readonly depth: number;
-  readonly pullBack: number;
-  /** Half the stretch of the launch edge over which the ground reaches the board's edge. */
-  readonly halfLaunch: number;
-}
-
-function half(lengthM: number): number {
-  return Math.round(toNm(lengthM) / 2);
-}
-
-function millimetres(nm: number): string {
-  return `${nm / 1e6} mm`;
-}
-
-function layOut({ brief, design }: ComposeInput): Layout {
-  const { radiator, feed, board } = design;
-  demandRoom(radiator, feed, board, brief.fabricator.copperToEdgeM);
-  const front = toNm(feed.lineLengthM);
-  const halfPatch = half(radiator.widthM);
-  const back = front + toNm(radiator.lengthM);
-  const pullBack = toNm(brief.fabricator.copperToEdgeM);
-  const axis = half(board.widthM);
-  const boardLength = toNm(board.lengthM);
-  const cornerRadius = toNm(board.cornerRadiusM);
-  const halfLine = half(feed.lineWidthM);
-  const corner = Math.max(pullBack, cornerRadius);
-  const wanted = halfLine + Math.max(LAUNCH_OVER_HEIGHT * toNm(brief.laminate.thicknessM), LAUNCH_LEAST_NM);
-  const layout: Layout = {
-    boardWidth: 2 * axis,
-    boardLength,
-    cornerRadius,
-    axis,
-    halfPatch,
-    front,
-    back,
-    halfLine,
-    halfInNotch: half(feed.lineWidthInNotchM),
-    gap: toNm(feed.notchGapM),
-    depth: toNm(feed.insetDepthM),
-    pullBack,
-    halfLaunch: Math.min(wanted, axis - corner),
-  };
-  demand(layout);
-  return layout;
-}
-
-/** A notch or a launch that cannot be drawn is refused with the field and what would do. */
-function demand(l: Layout): void {
-  if (l.depth > 0) {
-    const outer = l.halfInNotch + l.gap;
-    if (l.halfLine >= outer || l.gap <= 0) {
-      refuse({
-        code: 'feed.notch',
-        path: 'feed.pinned.lineWidth',
-        value: millimetres(2 * l.halfLine),
-        problem: `a line of ${millimetres(2 * l.halfLine)} closes the notch, which is ${millimetres(2 * outer)} wide`,
-        allowed: `allowed is less than ${millimetres(2 * outer)}`,
-      });
-    }
-  }
-  if (l.halfLaunch < l.halfLine) {
-    refuse({
-      code: 'board.launch',
-      path: 'board.width',
-      value: millimetres(l.boardWidth),
-      problem: 'the straight part of the launch edge is narrower than the feed line',
-      allowed: 'take a wider board or smaller corners',
-    });
-  }
 }
 
 /** Mirrors the right half of an outline, given from the axis upwards, into a whole contour. */
@@ -259,7 +171,7 @@ function dimensionsOf(l: Layout): readonly Dimension[] {
  *  Throws: EngineError "board.small", "board.cornerRadius", "board.launch", "feed.notch" for what cannot be drawn. */
 export function composeArtwork(input: ComposeInput): Artwork {
   const { brief, buildId } = input;
-  const l = layOut(input);
+  const l = layOut(input.brief, input.design);
   const outline = boardOutline(l.boardWidth, l.boardLength, l.cornerRadius);
   const board: Region = { outer: outline, holes: [] };
   const { mask, legend } = brief.fabricator;

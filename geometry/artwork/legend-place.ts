@@ -2,11 +2,13 @@
 
 import { point, type Stroke } from '../shape/shape.ts';
 import { toNm } from '../units.ts';
-import type { Layout } from './compose.ts';
+import type { Layout } from './layout.ts';
 import { legendText } from './legend.ts';
 
 /** Ink this many board heights away from radiator and feed does not touch their fields. */
 const CLEAR_OVER_HEIGHT = 3;
+/** Ink nearer to the board's edge than its copper rule and this looks cramped, and suffers from the router [nm]. */
+const FROM_EDGE_NM = 600_000;
 /** Space between two lines of text over their height. */
 const LINE_SPACE = 0.5;
 
@@ -36,7 +38,8 @@ export function composeLegend(
     return { strokes: [], remarks: ['The fabricator prints no legend: the board carries no build id.'] };
   const pen = toNm(wish.legend.lineM);
   const height = toNm(wish.legend.heightM);
-  const edge = Math.max(l.pullBack, Math.ceil(0.3 * l.cornerRadius));
+  // A rounded corner takes (1 − √½) of its radius from the diagonal.
+  const edge = Math.max(l.pullBack, Math.ceil(0.3 * l.cornerRadius)) + FROM_EDGE_NM;
   const clear = Math.max(CLEAR_OVER_HEIGHT * wish.heightNm, wish.reliefNm + pen);
   const inner = { left: edge, right: l.boardWidth - edge, bottom: edge, top: l.boardLength - edge };
   const spaces: readonly Space[] = [

@@ -9,6 +9,8 @@ import type { RuleReport } from '../rules/violation.ts';
 export interface NamedFile {
   readonly name: string;
   readonly bytes: Uint8Array;
+  /** What the file is, in a few words, for the list that the fabricator reads. */
+  readonly purpose?: string;
 }
 
 /** What only a platform can give, handed in as one record. */
@@ -30,3 +32,6 @@ export interface ExportInput {
 
 /** Writes one format. Deterministic: the same input gives the same bytes. */
 export type Exporter = (input: ExportInput) => readonly NamedFile[] | Promise<readonly NamedFile[]>;
+
+/** Writes a file that speaks of the others: it gets them finished, in their order in the package. */
+export type ClosingExporter = (input: ExportInput, files: readonly NamedFile[]) => NamedFile;

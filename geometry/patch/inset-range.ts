@@ -13,7 +13,7 @@ interface Range {
   readonly maximum: number;
 }
 
-/** The box of the reference that the law was fitted to. */
+/** The box of the reference that the law was fitted to: four boards, each with two or more notches. */
 export const INSET_BOX = {
   depthOverLength: { minimum: 0, maximum: 0.4 },
   gapOverHeight: { minimum: 0.19, maximum: 1.32 },
@@ -23,6 +23,8 @@ export const INSET_BOX = {
   aspect: { minimum: 1.18, maximum: 1.28 },
 } as const satisfies Record<string, Range>;
 
+/** A value this little outside still counts as inside: the law is smooth, and its box no wall. */
+const BORDER = 0.03;
 /** Half width of the feed law's error at three sigma, relative: its largest residual for insets of 0.15–0.4 L. */
 const FEED_ERROR_IN_BOX = 0.003;
 /** A plain edge or a shallow inset fits less well. */
@@ -59,7 +61,7 @@ export function feedRange(
   for (const key of Object.keys(INSET_BOX) as (keyof typeof INSET_BOX)[]) {
     const range: Range = INSET_BOX[key];
     const value = values[key];
-    if (value >= range.minimum && value <= range.maximum) continue;
+    if (value >= range.minimum / (1 + BORDER) && value <= range.maximum * (1 + BORDER)) continue;
     const edge = value < range.minimum ? range.minimum : range.maximum;
     distance += Math.abs(Math.log(value / edge));
     said.push(`${words[key]} ${value.toPrecision(3)} (${range.minimum} to ${range.maximum})`);

@@ -1,0 +1,370 @@
+// Generic classes of laminate as data: what they are, in which thicknesses, and where each number comes from.
+
+/** A pair of ends, lower first. */
+export type Range = readonly [number, number];
+
+export interface LaminateClass {
+  /** First part of the entries' names. */
+  readonly key: string;
+  readonly description: string;
+  /** Slash sheets as commonly quoted. To be verified before one is printed on an order. */
+  readonly sheets: string;
+  readonly permittivity: number;
+  readonly permittivityTolerance: number;
+  readonly lossTangent: number;
+  readonly lossTangentRange: Range;
+  /** Dielectric thickness and its tolerance [m]. */
+  readonly thicknesses: readonly (readonly [thicknessM: number, toleranceM: number])[];
+  /** Change of permittivity with temperature [1e-6/K]. */
+  readonly temperatureCoefficient: Range;
+  /** Water uptake [%]; null where it plays no part or is not known. */
+  readonly moisture: Range | null;
+  /** In-plane permittivity over that across the thickness; null where it is not known. */
+  readonly anisotropy: Range | null;
+  /** Where the numbers come from. */
+  readonly source: string;
+}
+
+const IPC = 'ranges of the class as makers of IPC-4101/4103 laminates publish them';
+const RANGE = 'middle of the range, ± the larger of the stated tolerance and half the range';
+const COMMON_THICKNESS = 'tolerance of the thickness: common practice, no source';
+const COMMON_CORES = 'thicknesses: common practice, no source';
+/** Boards of 0.8 mm and more are sold by their thickness with both coppers; 35 um each were taken off. */
+const OVERALL = 'sold by overall thickness: two coppers of 35 um taken off (0.8, 1.0, 1.2, 1.6, 2.0, 2.4, 3.2 mm)';
+
+const EPOXY_THICKNESSES: LaminateClass['thicknesses'] = [
+  [0.73e-3, 0.1e-3],
+  [0.93e-3, 0.1e-3],
+  [1.13e-3, 0.13e-3],
+  [1.53e-3, 0.13e-3],
+  [1.93e-3, 0.18e-3],
+  [2.33e-3, 0.18e-3],
+  [3.13e-3, 0.23e-3],
+];
+
+const PTFE_THICKNESSES: LaminateClass['thicknesses'] = [
+  [0.127e-3, 13e-6],
+  [0.254e-3, 20e-6],
+  [0.508e-3, 40e-6],
+  [0.787e-3, 50e-6],
+  [1.575e-3, 50e-6],
+  [3.175e-3, 0.1e-3],
+];
+
+export const LAMINATE_CLASSES: readonly LaminateClass[] = [
+  {
+    key: 'paper-phenolic',
+    description: 'paper and phenolic resin; avoid it above 500 MHz',
+    sheets: 'IPC-4101/03, /04',
+    permittivity: 5,
+    permittivityTolerance: 0.5,
+    lossTangent: 0.045,
+    lossTangentRange: [0.03, 0.06],
+    thicknesses: [[1.53e-3, 0.14e-3]],
+    temperatureCoefficient: [500, 1000],
+    moisture: [0.8, 2.5],
+    anisotropy: [1.1, 1.1],
+    source: `common practice, no source; ${RANGE}; ${OVERALL}`,
+  },
+  {
+    key: 'composite-epoxy',
+    description: 'epoxy with a core of paper or glass mat',
+    sheets: 'IPC-4101/10, /12, /14',
+    permittivity: 4.5,
+    permittivityTolerance: 0.3,
+    lossTangent: 0.025,
+    lossTangentRange: [0.02, 0.03],
+    thicknesses: [[1.53e-3, 0.13e-3]],
+    temperatureCoefficient: [300, 500],
+    moisture: [0.2, 0.5],
+    anisotropy: null,
+    source: `common practice, no source; ${RANGE}; ${OVERALL}`,
+  },
+  {
+    key: 'woven-glass-epoxy',
+    description: 'woven glass and epoxy, standard glass transition',
+    sheets: 'IPC-4101/21',
+    permittivity: 4.4,
+    permittivityTolerance: 0.2,
+    lossTangent: 0.02,
+    lossTangentRange: [0.016, 0.025],
+    thicknesses: EPOXY_THICKNESSES,
+    temperatureCoefficient: [150, 400],
+    moisture: [0.1, 0.35],
+    anisotropy: [1.1, 1.25],
+    source: `${IPC} (permittivity 4.2 to 4.7 seen); temperature coefficient: common practice, no source; ${OVERALL}`,
+  },
+  {
+    key: 'woven-glass-epoxy-high-tg',
+    description: 'woven glass and filled epoxy, high glass transition',
+    sheets: 'IPC-4101/24, /26, /99, /124, /126, /129',
+    permittivity: 4.3,
+    permittivityTolerance: 0.3,
+    lossTangent: 0.016,
+    lossTangentRange: [0.012, 0.02],
+    thicknesses: EPOXY_THICKNESSES,
+    temperatureCoefficient: [100, 300],
+    moisture: [0.1, 0.25],
+    anisotropy: [1.08, 1.2],
+    source: `${IPC}; ${RANGE}; ${OVERALL}`,
+  },
+  {
+    key: 'low-permittivity-epoxy',
+    description: 'modified epoxy and blends, made like ordinary glass epoxy',
+    sheets: 'IPC-4101 and 4103, several',
+    permittivity: 3.75,
+    permittivityTolerance: 0.15,
+    lossTangent: 0.01,
+    lossTangentRange: [0.008, 0.012],
+    thicknesses: [
+      [0.508e-3, 51e-6],
+      [0.762e-3, 76e-6],
+      [1.524e-3, 0.152e-3],
+    ],
+    temperatureCoefficient: [50, 200],
+    moisture: [0.1, 0.2],
+    anisotropy: [1.05, 1.15],
+    source: `${IPC}; ${RANGE}; thickness ±10 %; ${COMMON_CORES}`,
+  },
+  {
+    key: 'ppe-low-loss',
+    description: 'polyphenylene ether and glass',
+    sheets: 'IPC-4103/17',
+    permittivity: 3.35,
+    permittivityTolerance: 0.35,
+    lossTangent: 0.004,
+    lossTangentRange: [0.002, 0.006],
+    thicknesses: [
+      [0.508e-3, 41e-6],
+      [0.762e-3, 61e-6],
+      [1.524e-3, 0.122e-3],
+    ],
+    temperatureCoefficient: [-50, 50],
+    moisture: [0.05, 0.15],
+    anisotropy: [1.05, 1.12],
+    source: `${IPC}; ${RANGE} (a known product holds ±0.08); thickness ±8 %; ${COMMON_CORES}`,
+  },
+  {
+    key: 'hydrocarbon-3.55',
+    description: 'ceramic-filled hydrocarbon on woven glass, 3.38 by the clamped-stripline process test',
+    sheets: 'IPC-4103/10',
+    permittivity: 3.55,
+    permittivityTolerance: 0.05,
+    lossTangent: 0.0027,
+    lossTangentRange: [0.0021, 0.0027],
+    thicknesses: [
+      [0.203e-3, 25e-6],
+      [0.508e-3, 38e-6],
+      [0.813e-3, 50e-6],
+      [1.524e-3, 0.1e-3],
+    ],
+    temperatureCoefficient: [40, 40],
+    moisture: [0.06, 0.06],
+    anisotropy: [1.03, 1.08],
+    source: `${IPC}, design permittivity; ${COMMON_THICKNESS}`,
+  },
+  {
+    key: 'hydrocarbon-3.66',
+    description:
+      'ceramic-filled hydrocarbon on woven glass, flame retardant, 3.48 by the clamped-stripline process test',
+    sheets: 'IPC-4103/11, /240',
+    permittivity: 3.66,
+    permittivityTolerance: 0.05,
+    lossTangent: 0.0037,
+    lossTangentRange: [0.0031, 0.004],
+    thicknesses: [
+      [0.168e-3, 18e-6],
+      [0.254e-3, 25e-6],
+      [0.508e-3, 38e-6],
+      [0.762e-3, 50e-6],
+      [1.524e-3, 0.1e-3],
+    ],
+    temperatureCoefficient: [50, 50],
+    moisture: [0.06, 0.06],
+    anisotropy: [1.03, 1.08],
+    source: `${IPC}, design permittivity; ${COMMON_THICKNESS}`,
+  },
+  {
+    key: 'hydrocarbon-6.15',
+    description: 'ceramic-filled hydrocarbon of high permittivity',
+    sheets: 'IPC-4103, several',
+    permittivity: 6.15,
+    permittivityTolerance: 0.15,
+    lossTangent: 0.0033,
+    lossTangentRange: [0.0027, 0.0038],
+    thicknesses: [
+      [0.635e-3, 50e-6],
+      [1.27e-3, 80e-6],
+    ],
+    temperatureCoefficient: [-100, 50],
+    moisture: [0.05, 0.1],
+    anisotropy: [1.05, 1.05],
+    source: IPC,
+  },
+  {
+    key: 'ptfe-microfibre-2.20',
+    description: 'PTFE with random glass microfibre; soft',
+    sheets: 'IPC-4103/03, /04',
+    permittivity: 2.2,
+    permittivityTolerance: 0.02,
+    lossTangent: 0.0009,
+    lossTangentRange: [0.0009, 0.0009],
+    thicknesses: PTFE_THICKNESSES,
+    temperatureCoefficient: [-125, -125],
+    moisture: [0.02, 0.02],
+    anisotropy: [1, 1.03],
+    source: `${IPC}; ${COMMON_THICKNESS}`,
+  },
+  {
+    key: 'ptfe-microfibre-2.33',
+    description: 'PTFE with more random glass microfibre; soft',
+    sheets: 'IPC-4103/03, /04',
+    permittivity: 2.33,
+    permittivityTolerance: 0.02,
+    lossTangent: 0.0012,
+    lossTangentRange: [0.0012, 0.0012],
+    thicknesses: PTFE_THICKNESSES,
+    temperatureCoefficient: [-115, -115],
+    moisture: [0.02, 0.02],
+    anisotropy: [1, 1.03],
+    source: `${IPC}; ${COMMON_THICKNESS}`,
+  },
+  {
+    key: 'ptfe-woven-2.20',
+    description: 'PTFE on woven glass, little glass',
+    sheets: 'IPC-4103/05',
+    permittivity: 2.185,
+    permittivityTolerance: 0.04,
+    lossTangent: 0.0011,
+    lossTangentRange: [0.0009, 0.0013],
+    thicknesses: PTFE_THICKNESSES,
+    temperatureCoefficient: [-160, -130],
+    moisture: [0.02, 0.02],
+    anisotropy: [1.02, 1.08],
+    source: `${IPC}; ${RANGE}; ${COMMON_THICKNESS}`,
+  },
+  {
+    key: 'ptfe-woven-2.55',
+    description: 'PTFE on woven glass, more glass',
+    sheets: 'IPC-4103/05',
+    permittivity: 2.55,
+    permittivityTolerance: 0.1,
+    lossTangent: 0.002,
+    lossTangentRange: [0.0018, 0.0022],
+    thicknesses: [
+      [0.508e-3, 50e-6],
+      [0.787e-3, 50e-6],
+      [1.575e-3, 50e-6],
+      [3.175e-3, 0.1e-3],
+    ],
+    temperatureCoefficient: [-170, -100],
+    moisture: [0.03, 0.08],
+    anisotropy: [1.05, 1.15],
+    source: `${IPC}; ${RANGE}; ${COMMON_THICKNESS}`,
+  },
+  {
+    key: 'ptfe-ceramic-3.00',
+    description: 'PTFE filled with ceramic, steady over temperature',
+    sheets: 'IPC-4103/06',
+    permittivity: 3,
+    permittivityTolerance: 0.04,
+    lossTangent: 0.0012,
+    lossTangentRange: [0.001, 0.0014],
+    thicknesses: [
+      [0.254e-3, 20e-6],
+      [0.508e-3, 30e-6],
+      [0.762e-3, 40e-6],
+      [1.524e-3, 80e-6],
+    ],
+    temperatureCoefficient: [-3, 15],
+    moisture: [0.04, 0.1],
+    anisotropy: [1, 1.02],
+    source: `${IPC}; ${COMMON_THICKNESS}`,
+  },
+  {
+    key: 'ptfe-ceramic-6.15',
+    description: 'PTFE filled with ceramic',
+    sheets: 'IPC-4103/08',
+    permittivity: 6.15,
+    permittivityTolerance: 0.15,
+    lossTangent: 0.0023,
+    lossTangentRange: [0.002, 0.0025],
+    thicknesses: [
+      [0.635e-3, 30e-6],
+      [1.27e-3, 50e-6],
+    ],
+    temperatureCoefficient: [-260, -260],
+    moisture: [0.02, 0.1],
+    anisotropy: [1.02, 1.02],
+    source: `${IPC}; sheet: common practice, no source`,
+  },
+  {
+    key: 'ptfe-ceramic-10.2',
+    description: 'PTFE filled with ceramic; the design permittivity is often higher, 10.7 to 11.2',
+    sheets: 'IPC-4103/09',
+    permittivity: 10.2,
+    permittivityTolerance: 0.3,
+    lossTangent: 0.0023,
+    lossTangentRange: [0.0022, 0.0023],
+    thicknesses: [
+      [0.635e-3, 30e-6],
+      [1.27e-3, 50e-6],
+      [2.54e-3, 80e-6],
+    ],
+    temperatureCoefficient: [-395, -395],
+    moisture: [0.02, 0.05],
+    anisotropy: [1, 1.05],
+    source: `${IPC}; sheet: common practice, no source`,
+  },
+  {
+    key: 'alumina',
+    description: 'alumina 96 to 99.6 %, for thick and thin film',
+    sheets: 'none',
+    permittivity: 9.65,
+    permittivityTolerance: 0.25,
+    lossTangent: 0.0004,
+    lossTangentRange: [0.0001, 0.0006],
+    thicknesses: [[0.635e-3, 30e-6]],
+    temperatureCoefficient: [110, 140],
+    moisture: [0, 0],
+    anisotropy: [1, 1.05],
+    source: `ranges that makers of substrates publish; ${RANGE}`,
+  },
+  {
+    key: 'polyimide-film',
+    description: 'flexible film; dry it before measuring',
+    sheets: 'IPC-4103 and 4204, several',
+    permittivity: 3.35,
+    permittivityTolerance: 0.15,
+    lossTangent: 0.006,
+    lossTangentRange: [0.002, 0.01],
+    thicknesses: [
+      [50e-6, 5e-6],
+      [0.1e-3, 10e-6],
+      [0.15e-3, 15e-6],
+    ],
+    temperatureCoefficient: [-400, -300],
+    moisture: [0.8, 2.9],
+    anisotropy: [1.1, 1.2],
+    source: `${IPC}; ${RANGE}; thickness ±10 %`,
+  },
+  {
+    key: 'foam',
+    description: 'foam of low density as a spacer; a film of glue adds to it',
+    sheets: 'none',
+    permittivity: 1.07,
+    permittivityTolerance: 0.04,
+    lossTangent: 0.001,
+    lossTangentRange: [0.0002, 0.002],
+    thicknesses: [
+      [1e-3, 0.1e-3],
+      [2e-3, 0.2e-3],
+      [3e-3, 0.2e-3],
+      [5e-3, 0.2e-3],
+    ],
+    temperatureCoefficient: [0, 0],
+    moisture: null,
+    anisotropy: [1, 1],
+    source: `common practice, no source; ${RANGE}; ${COMMON_CORES}`,
+  },
+];

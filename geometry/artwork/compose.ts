@@ -10,8 +10,9 @@
 
 import type { Brief } from '../brief/brief.ts';
 import type { PatchDesign } from '../patch/design.ts';
-import { cleanRing, intersection } from '../shape/boolean.ts';
+import { intersection } from '../shape/boolean.ts';
 import { contourOf, rectangle } from '../shape/primitives.ts';
+import { cleanRing } from '../shape/rings.ts';
 import { type Contour, type Edge, type PointNm, point, type Region, type Shape } from '../shape/shape.ts';
 import { toNm } from '../units.ts';
 import type { Artwork, Dimension, LaunchEdge } from './artwork.ts';

@@ -3,6 +3,8 @@
 
 import { type Fault, refuse } from '../errors.ts';
 
+/** Largest input that is read at all, in bytes of UTF-8. */
+export const LARGEST_INPUT_BYTES = 1_000_000;
 /** Nothing that is read here is nested deeper than five. */
 const DEEPEST = 32;
 

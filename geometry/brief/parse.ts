@@ -10,13 +10,10 @@ import type { Brief, PinnedFeed, PinnedRadiator } from './brief.ts';
 import { completeFabricator, completeLaminate, FALLBACK_FABRICATOR, fallbackOf, type Take } from './complete.ts';
 import { faultsOf, type Place } from './faults.ts';
 import { BOARD_FIELDS, BRIEF_FIELDS, FEED_FIELDS, MATCH_FIELDS, RADIATOR_FIELDS } from './fields.ts';
-import { readJson } from './json-text.ts';
+import { LARGEST_INPUT_BYTES, readJson } from './json-text.ts';
 import { nearest } from './nearest.ts';
 import { BRIEF_SHAPE, briefSchema, fabricatorRecordSchema, laminateRecordSchema } from './schema.ts';
 import { holdsControlCharacters, shownText } from './text.ts';
-
-/** Largest input, in bytes of UTF-8. */
-export const LARGEST_INPUT_BYTES = 1_000_000;
 
 export interface ParseContext {
   /** The file as the user named it; it heads every fault. */

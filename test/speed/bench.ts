@@ -3,7 +3,7 @@
 import { spawnSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
 import { readFileSync } from 'node:fs';
-import { checkArtwork, makeArtwork, makePackage, parseBrief, type Platform, sizePatch } from '../../geometry/index.ts';
+import { checkArtwork, makeArtwork, makePackage, type Platform, parseBrief, sizePatch } from '../../geometry/index.ts';
 
 const digest = (algorithm: string) => (bytes: Uint8Array) => createHash(algorithm).update(bytes).digest('hex');
 const platform: Platform = { sha256Hex: digest('sha256'), md5Hex: digest('md5') };

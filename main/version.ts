@@ -1,0 +1,3 @@
+// The program's version, from the one place that has it.
+
+export { version } from '../package.json';

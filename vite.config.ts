@@ -1,4 +1,4 @@
-// Builds the command line, and the bench, into dist/: everything bundled, split so that a verb loads only what it needs.
+// Builds the command line, the bench and the report, into dist/: everything bundled, split so that a verb loads only what it needs.
 
 import { readdirSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
@@ -45,7 +45,7 @@ export default defineConfig({
     license: { fileName: 'licences.md' },
     minify: false,
     rolldownOptions: {
-      input: { cli: 'main/cli.ts', bench: 'test/speed/bench.ts' },
+      input: { cli: 'main/cli.ts', bench: 'test/speed/bench.ts', report: 'test/published/report.ts' },
       output: { entryFileNames: '[name].js', chunkFileNames: 'chunks/[name]-[hash].js' },
       // Modules of the engine only declare: what a verb does not use is left out of what it loads.
       treeshake: { moduleSideEffects: (id) => !id.startsWith(`${root}geometry/`) },

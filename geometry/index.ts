@@ -16,7 +16,7 @@ export { type FabricatorEntry, findFabricator, listFabricators } from './fabrica
 export type { Fabricator } from './fabricator/fabricator.ts';
 export { findLaminate, type LaminateEntry, listLaminates } from './laminate/catalogue.ts';
 export type { Laminate } from './laminate/laminate.ts';
-export type { PatchDesign, Prediction, Requirement, ResonanceKind } from './patch/design.ts';
+export type { Feed, PatchDesign, Prediction, Requirement, ResonanceKind } from './patch/design.ts';
 export type { BarePatchInput, BarePatchResult } from './patch/rectangular.ts';
 export { checkArtwork, makeArtwork, makePackage, parseBrief, predictBare, sizePatch } from './pipeline.ts';
 export type { RuleReport, RuleResult, Violation } from './rules/violation.ts';

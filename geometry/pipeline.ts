@@ -25,7 +25,9 @@ export function makeArtwork(brief: Brief, design: PatchDesign, platform: Platfor
 
 /** Every rule of the brief's fabricator against the artwork. */
 export function checkArtwork(brief: Brief, artwork: Artwork): RuleReport {
-  return checkRules({ artwork, fabricator: brief.fabricator, copperBaseM: brief.laminate.copperBaseM });
+  const { copperBaseM, copperThicknessM, thicknessM } = brief.laminate;
+  const boardThicknessM = thicknessM + 2 * copperThicknessM;
+  return checkRules({ artwork, fabricator: brief.fabricator, copperBaseM, boardThicknessM });
 }
 
 /** The fabrication package as the bytes of a zip. */

@@ -55,7 +55,7 @@ function buildWhereStale() {
 if (existsSync(vite)) buildWhereStale();
 if (process.exitCode === 3) fail('cannot build itself');
 if (process.exitCode === undefined) {
-  const entry = process.argv[2] === '--bench' ? 'bench.js' : 'cli.js';
+  const entry = { '--bench': 'bench.js', '--report': 'report.js' }[process.argv[2]] ?? 'cli.js';
   const file = join(root, 'dist', entry);
   if (!existsSync(file)) fail('there is no build in dist/, and nothing to build it with: run "npm ci"');
   await import(pathToFileURL(file).href);

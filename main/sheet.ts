@@ -2,6 +2,7 @@
 
 import {
   type Brief,
+  type Feed,
   formatFrequency,
   formatLengthMm,
   type Notice,
@@ -101,16 +102,43 @@ export function closingSections(notices: readonly Notice[]): readonly string[] {
   ];
 }
 
+/** The feed's dimensions in words. */
+function feedRows(feed: Feed): readonly string[] {
+  switch (feed.kind) {
+    case 'inset': {
+      const narrowed =
+        feed.lineWidthInNotchM === feed.lineWidthM ? '' : `, ${mm(feed.lineWidthInNotchM)} wide within the notch`;
+      return [
+        row('inset feed', `depth ${mm(feed.insetDepthM)}, gap ${mm(feed.notchGapM)} each side`),
+        row('feed line', `${mm(feed.lineWidthM)} wide${narrowed}, ${mm(feed.lineLengthM)} from the edge to the patch`),
+      ];
+    }
+    case 'quarter-wave':
+      return [
+        row('transformer', `${mm(feed.transformerWidthM)} wide, ${mm(feed.transformerLengthM)} long, at the patch`),
+        row('feed line', `${mm(feed.lineWidthM)} wide, ${mm(feed.lineLengthM)} from the edge to the transformer`),
+      ];
+    case 'probe':
+      return [
+        row(
+          'probe',
+          `${mm(feed.offsetM)} from the patch's centre towards its front edge, pin ${mm(feed.pinDiameterM)}`,
+        ),
+        row(
+          'hole',
+          `${mm(feed.holeDiameterM)}, ${feed.plated ? 'plated' : 'not plated'}, pad ${mm(feed.padDiameterM)}, opening in the ground ${mm(feed.clearanceDiameterM)}`,
+        ),
+      ];
+  }
+}
+
 export function designSheet(brief: Brief, design: PatchDesign): string {
   const { radiator, feed, board, prediction } = design;
-  const narrowed =
-    feed.lineWidthInNotchM === feed.lineWidthM ? '' : `, ${mm(feed.lineWidthInNotchM)} wide within the notch`;
   return [
     brief.title,
     ...section('Dimensions', [
       row('patch', `length ${mm(radiator.lengthM)} (resonant, along y), width ${mm(radiator.widthM)}`),
-      row('inset feed', `depth ${mm(feed.insetDepthM)}, gap ${mm(feed.notchGapM)} each side`),
-      row('feed line', `${mm(feed.lineWidthM)} wide${narrowed}, ${mm(feed.lineLengthM)} from the edge to the patch`),
+      ...feedRows(feed),
       row('board', `width ${mm(board.widthM)}, length ${mm(board.lengthM)}`),
       row(
         'laminate',

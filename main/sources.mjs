@@ -4,7 +4,7 @@ import { createHash } from 'node:crypto';
 import { readdirSync, readFileSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 
-const FOLDERS = ['geometry', 'main', 'test/speed'];
+const FOLDERS = ['geometry', 'main', 'test/speed', 'test/published'];
 const FILES = ['package.json', 'package-lock.json', 'vite.config.ts'];
 /** Within dist/, written last. */
 const STAMP = 'sources.txt';

@@ -8,6 +8,18 @@ export interface Hole {
   readonly centre: PointNm;
   readonly finishedDiameterNm: number;
   readonly plated: boolean;
+  /** pin: of a feed; mounting: of a connector's flange. */
+  readonly use: 'pin' | 'mounting';
+  /** What a drawing calls it, e.g. "pin of J1". */
+  readonly label: string;
+}
+
+/** Copper that something is soldered to: flashed in the files, with its function. It is part of its layer's copper too. */
+export interface Pad {
+  readonly layer: 'copper-top' | 'copper-bottom';
+  readonly centre: PointNm;
+  readonly diameterNm: number;
+  readonly label: string;
 }
 
 /** A stretch of the board's edge where copper reaches the edge by intent. */
@@ -49,6 +61,7 @@ export interface Artwork {
   /** Legend on the top side; empty where the fabricator prints none. */
   readonly legendTop: readonly Stroke[];
   readonly holes: readonly Hole[];
+  readonly pads: readonly Pad[];
   readonly launches: readonly LaunchEdge[];
   readonly dimensions: readonly Dimension[];
   /** What could not be drawn as wished, as whole sentences. */

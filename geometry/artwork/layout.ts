@@ -3,7 +3,7 @@
 import type { Brief } from '../brief/brief.ts';
 import { refuse } from '../errors.ts';
 import { demandRoom } from '../patch/board-room.ts';
-import type { PatchDesign } from '../patch/design.ts';
+import { frontEdgeM, type PatchDesign } from '../patch/design.ts';
 import { toNm } from '../units.ts';
 
 /** Ground kept up to the board's edge on either side of the line: five heights, and room for a connector's legs. */
@@ -20,17 +20,32 @@ export interface Layout {
   readonly halfPatch: number;
   readonly front: number;
   readonly back: number;
-  readonly halfLine: number;
-  readonly halfInNotch: number;
-  readonly gap: number;
-  readonly depth: number;
   readonly pullBack: number;
-  /** Half the stretch of the launch edge over which the ground reaches the board's edge. */
-  readonly halfLaunch: number;
+  /** The line to the board's edge, and half the stretch over which the ground reaches that edge; null for a probe. */
+  readonly line: { readonly half: number; readonly halfLaunch: number } | null;
+  /** Null for a plain edge. */
+  readonly notch: { readonly halfLine: number; readonly gap: number; readonly depth: number } | null;
+  /** Half its width, and where it begins on the way from the board's edge. */
+  readonly transformer: { readonly half: number; readonly from: number } | null;
+  readonly pin: PinLayout | null;
+}
+
+export interface PinLayout {
+  /** Height of the pin on the axis. */
+  readonly y: number;
+  readonly hole: number;
+  readonly pad: number;
+  readonly clearance: number;
+  readonly plated: boolean;
 }
 
 function half(lengthM: number): number {
   return Math.round(toNm(lengthM) / 2);
+}
+
+/** To an even number of nanometres, so that a centred circle has whole ends. */
+function even(lengthM: number): number {
+  return 2 * half(lengthM);
 }
 
 function millimetres(nm: number): string {
@@ -41,55 +56,68 @@ function millimetres(nm: number): string {
  *  Throws: EngineError "board.small", "board.cornerRadius", "board.launch", "feed.notch" for what cannot be drawn. */
 export function layOut(brief: Brief, design: PatchDesign): Layout {
   const { radiator, feed, board } = design;
-  demandRoom(radiator, feed, board, brief.fabricator.copperToEdgeM);
-  const front = toNm(feed.lineLengthM);
-  const halfPatch = half(radiator.widthM);
-  const back = front + toNm(radiator.lengthM);
+  demandRoom(radiator, frontEdgeM(feed), board, brief.fabricator.copperToEdgeM);
+  const front = toNm(frontEdgeM(feed));
+  const length = toNm(radiator.lengthM);
   const pullBack = toNm(brief.fabricator.copperToEdgeM);
   const axis = half(board.widthM);
-  const boardLength = toNm(board.lengthM);
   const cornerRadius = toNm(board.cornerRadiusM);
-  const halfLine = half(feed.lineWidthM);
-  const corner = Math.max(pullBack, cornerRadius);
-  const wanted = halfLine + Math.max(LAUNCH_OVER_HEIGHT * toNm(brief.laminate.thicknessM), LAUNCH_LEAST_NM);
+  const lineHalf = feed.kind === 'probe' ? null : half(feed.lineWidthM);
+  const wanted = (lineHalf ?? 0) + Math.max(LAUNCH_OVER_HEIGHT * toNm(brief.laminate.thicknessM), LAUNCH_LEAST_NM);
   const layout: Layout = {
     boardWidth: 2 * axis,
-    boardLength,
+    boardLength: toNm(board.lengthM),
     cornerRadius,
     axis,
-    halfPatch,
+    halfPatch: half(radiator.widthM),
     front,
-    back,
-    halfLine,
-    halfInNotch: half(feed.lineWidthInNotchM),
-    gap: toNm(feed.notchGapM),
-    depth: toNm(feed.insetDepthM),
+    back: front + length,
     pullBack,
-    halfLaunch: Math.min(wanted, axis - corner),
+    line:
+      lineHalf === null
+        ? null
+        : { half: lineHalf, halfLaunch: Math.min(wanted, axis - Math.max(pullBack, cornerRadius)) },
+    notch:
+      feed.kind === 'inset' && toNm(feed.insetDepthM) > 0
+        ? { halfLine: half(feed.lineWidthInNotchM), gap: toNm(feed.notchGapM), depth: toNm(feed.insetDepthM) }
+        : null,
+    transformer:
+      feed.kind === 'quarter-wave' ? { half: half(feed.transformerWidthM), from: toNm(feed.lineLengthM) } : null,
+    pin:
+      feed.kind === 'probe'
+        ? {
+            y: front + Math.round(length / 2) - toNm(feed.offsetM),
+            hole: even(feed.holeDiameterM),
+            pad: even(feed.padDiameterM),
+            clearance: even(feed.clearanceDiameterM),
+            plated: feed.plated,
+          }
+        : null,
   };
   demand(layout);
   return layout;
 }
 
 /** A notch or a launch that cannot be drawn is refused with the field and what would do. */
-function demand(l: Layout): void {
-  if (l.depth > 0) {
-    const outer = l.halfInNotch + l.gap;
-    if (l.halfLine >= outer || l.gap <= 0) {
+function demand({ line, notch, boardWidth }: Layout): void {
+  if (line === null) return;
+  if (notch !== null) {
+    const outer = notch.halfLine + notch.gap;
+    if (line.half >= outer || notch.gap <= 0) {
       refuse({
         code: 'feed.notch',
         path: 'feed.pinned.lineWidth',
-        value: millimetres(2 * l.halfLine),
-        problem: `a line of ${millimetres(2 * l.halfLine)} closes the notch, which is ${millimetres(2 * outer)} wide`,
+        value: millimetres(2 * line.half),
+        problem: `a line of ${millimetres(2 * line.half)} closes the notch, which is ${millimetres(2 * outer)} wide`,
         allowed: `allowed is less than ${millimetres(2 * outer)}`,
       });
     }
   }
-  if (l.halfLaunch < l.halfLine) {
+  if (line.halfLaunch < line.half) {
     refuse({
       code: 'board.launch',
       path: 'board.width',
-      value: millimetres(l.boardWidth),
+      value: millimetres(boardWidth),
       problem: 'the straight part of the launch edge is narrower than the feed line',
       allowed: 'take a wider board or smaller corners',
     });

@@ -43,8 +43,12 @@ export function composeLegend(
   const clear = Math.max(CLEAR_OVER_HEIGHT * wish.heightNm, wish.reliefNm + pen);
   const inner = { left: edge, right: l.boardWidth - edge, bottom: edge, top: l.boardLength - edge };
   const spaces: readonly Space[] = [
-    { x0: inner.left, y0: inner.bottom, x1: l.axis - l.halfLine - clear, y1: l.front - clear },
-    { x0: l.axis + l.halfLine + clear, y0: inner.bottom, x1: inner.right, y1: l.front - clear },
+    ...(l.line === null
+      ? [{ x0: inner.left, y0: inner.bottom, x1: inner.right, y1: l.front - clear }]
+      : [
+          { x0: inner.left, y0: inner.bottom, x1: l.axis - l.line.half - clear, y1: l.front - clear },
+          { x0: l.axis + l.line.half + clear, y0: inner.bottom, x1: inner.right, y1: l.front - clear },
+        ]),
     { x0: inner.left, y0: l.back + clear, x1: inner.right, y1: inner.top },
   ];
   for (const lines of [[wish.buildId, wish.slug], [wish.buildId]]) {

@@ -26,8 +26,8 @@ export function validateArtwork(artwork: Artwork): readonly GeometryFault[] {
     for (const p of stroke.points) {
       if (!Number.isSafeInteger(p.xNm) || !Number.isSafeInteger(p.yNm)) {
         faults.push({ code: 'notWhole', where: `legendTop[${i}]`, at: p });
-      }
-      if (locate(p, border) !== 'inside') faults.push({ code: 'outsideProfile', where: `legendTop[${i}]`, at: p });
+      } else if (locate(p, border) !== 'inside')
+        faults.push({ code: 'outsideProfile', where: `legendTop[${i}]`, at: p });
     }
   });
   return faults;

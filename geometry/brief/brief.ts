@@ -9,13 +9,34 @@ export interface PinnedRadiator {
   readonly widthM?: number;
 }
 
-export interface PinnedFeed {
+export interface PinnedInset {
   readonly insetDepthM?: number;
   readonly notchGapM?: number;
   readonly lineWidthM?: number;
   readonly lineWidthInNotchM?: number;
   readonly lineLengthM?: number;
 }
+
+export interface PinnedQuarterWave {
+  readonly lineWidthM?: number;
+  readonly lineLengthM?: number;
+  readonly transformerWidthM?: number;
+  readonly transformerLengthM?: number;
+}
+
+export interface PinnedProbe {
+  readonly offsetM?: number;
+  readonly pinDiameterM?: number;
+  readonly holeDiameterM?: number;
+  readonly padDiameterM?: number;
+  readonly clearanceDiameterM?: number;
+}
+
+/** How the line meets the patch, and which of its dimensions are fixed. */
+export type FeedWish =
+  | { readonly kind: 'inset'; readonly pinned: PinnedInset }
+  | { readonly kind: 'quarter-wave'; readonly pinned: PinnedQuarterWave }
+  | { readonly kind: 'probe'; readonly pinned: PinnedProbe; readonly plated: boolean };
 
 export interface BoardWish {
   /** Copper-free laminate around the patch, or 'auto'. */
@@ -34,7 +55,7 @@ export interface Brief {
   readonly polarization: 'linear';
   readonly laminate: Laminate;
   readonly radiator: { readonly family: 'rectangular'; readonly pinned: PinnedRadiator };
-  readonly feed: { readonly kind: 'inset'; readonly pinned: PinnedFeed };
+  readonly feed: FeedWish;
   readonly board: BoardWish;
   readonly fabricator: Fabricator;
   /** Fields that took a default, as `path: value` in the brief's own words. */

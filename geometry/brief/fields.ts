@@ -205,7 +205,13 @@ export const PINNED_RADIATOR_FIELDS = {
 } as const satisfies Record<string, Field>;
 
 export const FEED_FIELDS = {
-  kind: { kind: 'choice', label: 'Feed', help: 'How the line meets the patch.', choices: ['inset'], fallback: 'inset' },
+  kind: {
+    kind: 'choice',
+    label: 'Feed',
+    help: 'How the line meets the patch: in a notch, at its edge through a quarter-wave transformer, or a pin from below.',
+    choices: ['inset', 'quarter-wave', 'probe'],
+    fallback: 'inset',
+  },
 } as const satisfies Record<string, Field>;
 
 export const PINNED_FEED_FIELDS = {
@@ -218,8 +224,25 @@ export const PINNED_FEED_FIELDS = {
   notchGap: copper('Notch gap', 'Clear space on each side of the line within the notch.'),
   lineWidth: copper('Line width', 'Of the feed line.'),
   lineWidthInNotch: copper('Line width in the notch', 'Of the feed line within the notch.'),
-  lineLength: copper('Line length', 'From the edge of the board to the front edge of the patch.'),
+  lineLength: copper(
+    'Line length',
+    'From the edge of the board to the front edge of the patch, or to its transformer.',
+  ),
+  transformerWidth: copper('Transformer width', 'Of the quarter-wave section.'),
+  transformerLength: copper('Transformer length', 'Of the quarter-wave section.'),
+  offset: length('Pin offset', 'From the centre of the patch towards its front edge.', 0, MAXIMUM_BOARD_M),
+  pinDiameter: length('Pin diameter', 'Of the coaxial pin.', 50e-6, 20e-3),
+  holeDiameter: length('Hole diameter', 'Finished, for the pin.', 50e-6, 20e-3),
+  padDiameter: length('Pad diameter', 'Copper around the pin on the patch.', 50e-6, 50e-3),
+  clearanceDiameter: length('Clearance diameter', 'Opening in the ground around the pin.', 50e-6, 50e-3),
 } as const satisfies Record<string, Field>;
+
+/** Which dimensions each feed has. */
+export const PINNED_OF_FEED = {
+  inset: ['insetDepth', 'notchGap', 'lineWidth', 'lineWidthInNotch', 'lineLength'],
+  'quarter-wave': ['lineWidth', 'lineLength', 'transformerWidth', 'transformerLength'],
+  probe: ['offset', 'pinDiameter', 'holeDiameter', 'padDiameter', 'clearanceDiameter'],
+} as const satisfies Record<(typeof FEED_FIELDS.kind.choices)[number], readonly (keyof typeof PINNED_FEED_FIELDS)[]>;
 
 export const BOARD_FIELDS = {
   margin: length('Margin', 'Laminate around the patch, or "auto".', 0, MAXIMUM_BOARD_M, 'auto'),

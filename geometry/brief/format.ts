@@ -94,7 +94,11 @@ export function formatBrief(brief: Brief): unknown {
     polarization: brief.polarization,
     laminate: formatLaminate(brief.laminate),
     radiator: { family: brief.radiator.family, pinned: formatPinned(brief.radiator.pinned) },
-    feed: { kind: brief.feed.kind, pinned: formatPinned(brief.feed.pinned) },
+    feed: {
+      kind: brief.feed.kind,
+      ...(brief.feed.kind === 'probe' ? { plated: brief.feed.plated } : {}),
+      pinned: formatPinned(brief.feed.pinned),
+    },
     board: formatBoard(brief.board),
     fabricator: formatFabricator(brief.fabricator),
   };

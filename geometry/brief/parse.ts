@@ -6,7 +6,7 @@ import { findFabricator, listFabricators } from '../fabricator/catalogue.ts';
 import type { Fabricator } from '../fabricator/fabricator.ts';
 import { findLaminate, listLaminates } from '../laminate/catalogue.ts';
 import type { Laminate } from '../laminate/laminate.ts';
-import type { Brief, PinnedFeed, PinnedRadiator } from './brief.ts';
+import type { Brief, FeedWish, PinnedRadiator } from './brief.ts';
 import { completeFabricator, completeLaminate, FALLBACK_FABRICATOR, fallbackOf, type Take } from './complete.ts';
 import { faultsOf, type Place } from './faults.ts';
 import { BOARD_FIELDS, BRIEF_FIELDS, FEED_FIELDS, MATCH_FIELDS, RADIATOR_FIELDS } from './fields.ts';
@@ -197,6 +197,14 @@ function readSections(reading: Reading, record: Readonly<Record<string, unknown>
   return sections as Sections;
 }
 
+/** The feed with its own dimensions; that they are its own has been checked. */
+function feedWish(feed: Sections['feed'], take: Take): FeedWish {
+  const kind = feed?.kind ?? FEED_FIELDS.kind.fallback;
+  const pinned = withUnit(feed?.pinned);
+  if (kind !== 'probe') return { kind, pinned };
+  return { kind, pinned, plated: take('feed.plated', feed?.plated, false, 'false') };
+}
+
 function assemble(reading: Reading, sections: Sections, laminate: Laminate, fabricator: Fabricator): Brief {
   const { band, match, board, radiator, feed } = sections;
   invariant(band !== undefined, 'a brief without faults has a band');
@@ -223,7 +231,7 @@ function assemble(reading: Reading, sections: Sections, laminate: Laminate, fabr
     polarization: 'linear',
     laminate,
     radiator: { family: 'rectangular', pinned: withUnit(radiator?.pinned) as PinnedRadiator },
-    feed: { kind: 'inset', pinned: withUnit(feed?.pinned) as PinnedFeed },
+    feed: feedWish(feed, take),
     board: {
       marginM: sized ? 'auto' : take('board.margin', board?.margin, 'auto', 'auto'),
       ...withUnit({ width: board?.width, length: board?.length }),

@@ -18,6 +18,7 @@ import {
   MATCH_FIELDS,
   type NumberField,
   PINNED_FEED_FIELDS,
+  PINNED_OF_FEED,
   PINNED_RADIATOR_FIELDS,
   PLATED_FIELDS,
   type QuantityField,
@@ -36,8 +37,8 @@ export interface CheckParams {
 type Context = z.core.$RefinementCtx<unknown>;
 
 /** @param at  field within the record that the fault is about, where it is not the record itself */
-function complain(context: Context, input: unknown, params: CheckParams, at?: string): never {
-  const path = at === undefined ? [] : [at];
+function complain(context: Context, input: unknown, params: CheckParams, at: readonly string[] = []): never {
+  const path = [...at];
   context.issues.push({ code: 'custom', input, message: params.problem, params: { ...params }, path });
   return z.NEVER as never;
 }
@@ -163,18 +164,44 @@ export const radiatorSchema = z.strictObject({
     .optional(),
 });
 
-export const feedSchema = z.strictObject({
-  kind: choice(FEED_FIELDS.kind).optional(),
-  pinned: z
-    .strictObject({
-      insetDepth: quantity(PINNED_FEED_FIELDS.insetDepth).optional(),
-      notchGap: quantity(PINNED_FEED_FIELDS.notchGap).optional(),
-      lineWidth: quantity(PINNED_FEED_FIELDS.lineWidth).optional(),
-      lineWidthInNotch: quantity(PINNED_FEED_FIELDS.lineWidthInNotch).optional(),
-      lineLength: quantity(PINNED_FEED_FIELDS.lineLength).optional(),
-    })
-    .optional(),
+const pinnedFeedSchema = z.strictObject({
+  insetDepth: quantity(PINNED_FEED_FIELDS.insetDepth).optional(),
+  notchGap: quantity(PINNED_FEED_FIELDS.notchGap).optional(),
+  lineWidth: quantity(PINNED_FEED_FIELDS.lineWidth).optional(),
+  lineWidthInNotch: quantity(PINNED_FEED_FIELDS.lineWidthInNotch).optional(),
+  lineLength: quantity(PINNED_FEED_FIELDS.lineLength).optional(),
+  transformerWidth: quantity(PINNED_FEED_FIELDS.transformerWidth).optional(),
+  transformerLength: quantity(PINNED_FEED_FIELDS.transformerLength).optional(),
+  offset: quantity(PINNED_FEED_FIELDS.offset).optional(),
+  pinDiameter: quantity(PINNED_FEED_FIELDS.pinDiameter).optional(),
+  holeDiameter: quantity(PINNED_FEED_FIELDS.holeDiameter).optional(),
+  padDiameter: quantity(PINNED_FEED_FIELDS.padDiameter).optional(),
+  clearanceDiameter: quantity(PINNED_FEED_FIELDS.clearanceDiameter).optional(),
 });
+
+export const feedSchema = z
+  .strictObject({
+    kind: choice(FEED_FIELDS.kind).optional(),
+    plated: z
+      .boolean()
+      .meta({ title: 'Plated', description: "Whether a probe's hole is plated; not, where left out." })
+      .optional(),
+    pinned: pinnedFeedSchema.optional(),
+  })
+  .transform((feed, context) => {
+    const kind = feed.kind ?? FEED_FIELDS.kind.fallback;
+    const own: readonly string[] = PINNED_OF_FEED[kind];
+    const stranger = Object.keys(feed.pinned ?? {}).find((key) => !own.includes(key));
+    if (stranger !== undefined) {
+      const params = { code: 'feed.pinned', problem: `a feed of kind "${kind}" has no such dimension` };
+      return complain(context, feed, { ...params, allowed: `allowed are ${own.join(', ')}` }, ['pinned', stranger]);
+    }
+    if (feed.plated !== undefined && kind !== 'probe') {
+      const params = { code: 'feed.plated', problem: `a feed of kind "${kind}" has no hole` };
+      return complain(context, feed, { ...params, allowed: 'only a probe may be plated' }, ['plated']);
+    }
+    return feed;
+  });
 
 export const boardSchema = z
   .strictObject({
@@ -193,7 +220,7 @@ export const boardSchema = z
     for (const key of ['width', 'length'] as const) {
       if (board[key] !== undefined && board.pinned?.[key] !== undefined) {
         const params = { code: 'board.twice', problem: `the board's ${key} is given twice` };
-        return complain(context, board, { ...params, allowed: `"${key}" or "pinned.${key}" is taken` }, key);
+        return complain(context, board, { ...params, allowed: `"${key}" or "pinned.${key}" is taken` }, [key]);
       }
     }
     const width = board.width ?? board.pinned?.width;
@@ -201,17 +228,14 @@ export const boardSchema = z
     if (width !== undefined && length !== undefined && board.margin !== undefined && board.margin !== 'auto') {
       const params = { code: 'board.margin', problem: 'a margin beside both width and length says it twice' };
       const allowed = 'leave out the margin, or the width or the length';
-      return complain(context, board, { ...params, allowed }, 'margin');
+      return complain(context, board, { ...params, allowed }, ['margin']);
     }
     const radius = board.cornerRadius ?? 0;
     if (Math.min(width ?? Number.POSITIVE_INFINITY, length ?? Number.POSITIVE_INFINITY) < 2 * radius) {
       const params = { code: 'board.cornerRadius', problem: 'the corners do not fit on the board' };
-      return complain(
-        context,
-        board,
-        { ...params, allowed: 'allowed is up to half of the shorter side' },
+      return complain(context, board, { ...params, allowed: 'allowed is up to half of the shorter side' }, [
         'cornerRadius',
-      );
+      ]);
     }
     return { margin: board.margin, width, length, cornerRadius: board.cornerRadius };
   });

@@ -48,7 +48,7 @@ export function exportDesign(input: ExportInput): readonly NamedFile[] {
       to: plainPoint(violation.to),
       message: violation.message,
     })),
-    remarks: report.remarks,
+    remarks: [...artwork.remarks, ...report.remarks],
   };
   return [{ name: 'design.json', bytes: encodeJson(record), purpose: 'dimensions, prediction and rules as data' }];
 }

@@ -42,6 +42,8 @@ export const LABEL_SIZE_MM = 2.3;
 export const ARROW_MM = 2.2;
 /** Between a value and the frame round it. */
 export const FRAME_MM = 0.8;
+/** Between a label and the value after it. */
+export const LABEL_GAP_MM = 1.5;
 /** Length of the tails that carry arrows from outside. */
 export const TAIL_MM = 5;
 
@@ -122,7 +124,7 @@ function place(
   const spanMm = end.alongMm - start.alongMm;
 
   const between = Math.max(valueWidthMm(dimension) + 2 * ARROW_MM + 1, labelWidthMm(dimension)) <= spanMm;
-  const besideMm = TAIL_MM + 1 + labelWidthMm(dimension) + 1.5 + valueWidthMm(dimension);
+  const besideMm = TAIL_MM + 1 + labelWidthMm(dimension) + LABEL_GAP_MM + valueWidthMm(dimension);
   const choices: readonly Span[] = between
     ? [{ text: 'between', fromMm: start.alongMm, toMm: end.alongMm }]
     : [

@@ -3,7 +3,9 @@
 import {
   ARROW_MM,
   FRAME_MM,
+  LABEL_GAP_MM,
   LABEL_SIZE_MM,
+  labelWidthMm,
   type PlacedDimension,
   TAIL_MM,
   VALUE_SIZE_MM,
@@ -12,7 +14,6 @@ import {
 } from './dimension-layout.ts';
 import { at, type DrawingItem, type Path, type PointMm, polyline } from './display-list.ts';
 import { INK, PAPER, SECOND_INK } from './inks.ts';
-import { textWidthMm } from './text-width.ts';
 
 /** The board on the sheet [mm]. */
 export interface BoardFrame {
@@ -89,59 +90,56 @@ function texts(item: PlacedDimension, sheet: ToSheet): readonly DrawingItem[] {
   const { dimension, startMm, endMm, distanceMm } = item;
   const upwards = dimension.axis === 'y';
   const valueWidth = valueWidthMm(dimension);
+  const labelWidth = labelWidthMm(dimension);
   // Of a text that reads upwards the top points left: towards the board on its right side, away from it on its left.
   const topIsAway = item.side === 'above' || item.side === 'left';
-  const raise = (byMm: number): number => distanceMm + (topIsAway ? byMm : -byMm);
+  const raised = (byMm: number): number => distanceMm + (topIsAway ? byMm : -byMm);
 
-  const labelWidth = textWidthMm(dimension.label, LABEL_SIZE_MM);
-  let middle = (startMm + endMm) / 2;
-  let label: DrawingItem = text(sheet(middle, raise(VALUE_SIZE_MM / 2 + FRAME_MM + 0.5)), 'middle');
+  // Between the arrows the label stands above the value; beside them the two stand in a row, label first.
+  let valueMiddle = (startMm + endMm) / 2;
+  let labelMiddle = valueMiddle;
+  let labelAway = raised(VALUE_SIZE_MM / 2 + FRAME_MM + 0.5 + BASE_LINE * LABEL_SIZE_MM);
   if (item.text !== 'between') {
-    const labelStart =
-      item.text === 'after' ? endMm + TAIL_MM + 1 : startMm - TAIL_MM - 1 - valueWidth - 1.5 - labelWidth;
-    middle = labelStart + labelWidth + 1.5 + valueWidth / 2;
-    label = text(sheet(labelStart, raise(-BASE_LINE * LABEL_SIZE_MM)), 'start');
+    const rowWidth = labelWidth + LABEL_GAP_MM + valueWidth;
+    const rowStart = item.text === 'after' ? endMm + TAIL_MM + 1 : startMm - TAIL_MM - 1 - rowWidth;
+    labelMiddle = rowStart + labelWidth / 2;
+    valueMiddle = rowStart + rowWidth - valueWidth / 2;
+    labelAway = distanceMm;
   }
-  const half = VALUE_SIZE_MM / 2 + FRAME_MM / 2;
-  const frame = polyline(
-    [
-      sheet(middle - valueWidth / 2, distanceMm - half),
-      sheet(middle + valueWidth / 2, distanceMm - half),
-      sheet(middle + valueWidth / 2, distanceMm + half),
-      sheet(middle - valueWidth / 2, distanceMm + half),
-    ],
-    true,
-  );
+  const paper = (middle: number, away: number, width: number, height: number): Path =>
+    polyline(
+      [
+        sheet(middle - width / 2, away - height / 2),
+        sheet(middle + width / 2, away - height / 2),
+        sheet(middle + width / 2, away + height / 2),
+        sheet(middle - width / 2, away + height / 2),
+      ],
+      true,
+    );
+  const down = (away: number, size: number): number => away - (topIsAway ? 1 : -1) * BASE_LINE * size;
+  const word = (text: string, middle: number, away: number, sizeMm: number, colour: string): DrawingItem => ({
+    kind: 'text',
+    at: sheet(middle, down(away, sizeMm)),
+    text,
+    sizeMm,
+    face: 'sans',
+    colour,
+    anchor: 'middle',
+    upwards,
+  });
   return [
     {
       kind: 'path',
-      paths: [frame],
+      paths: [paper(labelMiddle, labelAway, labelWidth, LABEL_SIZE_MM)],
+      fill: { kind: 'solid', colour: PAPER },
+    },
+    {
+      kind: 'path',
+      paths: [paper(valueMiddle, distanceMm, valueWidth, VALUE_SIZE_MM + FRAME_MM)],
       fill: { kind: 'solid', colour: PAPER },
       ...(dimension.critical ? { pen: { colour: INK, widthMm: 0.25 } } : {}),
     },
-    {
-      kind: 'text',
-      at: sheet(middle, raise(-BASE_LINE * VALUE_SIZE_MM)),
-      text: valueText(dimension),
-      sizeMm: VALUE_SIZE_MM,
-      face: 'sans',
-      colour: INK,
-      anchor: 'middle',
-      upwards,
-    },
-    label,
+    word(dimension.label, labelMiddle, labelAway, LABEL_SIZE_MM, SECOND_INK),
+    word(valueText(dimension), valueMiddle, distanceMm, VALUE_SIZE_MM, INK),
   ];
-
-  function text(point: PointMm, anchor: 'start' | 'middle'): DrawingItem {
-    return {
-      kind: 'text',
-      at: point,
-      text: dimension.label,
-      sizeMm: LABEL_SIZE_MM,
-      face: 'sans',
-      colour: SECOND_INK,
-      anchor,
-      upwards,
-    };
-  }
 }

@@ -1,8 +1,8 @@
 // A drawing as a list of paths and texts in millimetres on a sheet; origin lower left, x right, y up.
 // Whatever shows a drawing (an SVG, a PDF, a screen) takes this list and nothing else.
 
+import { arcSweepRad } from '../shape/flatten.ts';
 import type { Contour, Shape } from '../shape/shape.ts';
-import { arcSweepRad } from './arc-sweep.ts';
 
 export interface PointMm {
   readonly xMm: number;

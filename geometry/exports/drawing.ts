@@ -81,7 +81,7 @@ export function drawBoard(input: ExportInput): DisplayList {
         heightMm: mmFromNm(artwork.board.lengthNm) * scale,
       }),
       ...launchMarks(artwork, placement),
-      ...captions(sheet, scaleText),
+      ...captions(sheet, scaleText, artwork.hasSolderMask),
       ...drawColumn(input, {
         leftMm: sheet.widthMm - FRAME_MM - BAND_MM - COLUMN_MM,
         bottomMm: FRAME_MM + BAND_MM,
@@ -203,7 +203,7 @@ function neatLine(sheet: Sheet): readonly DrawingItem[] {
 }
 
 /** Caption above the view, key of the lines below it. */
-function captions(sheet: Sheet, scaleText: string): readonly DrawingItem[] {
+function captions(sheet: Sheet, scaleText: string, hasSolderMask: boolean): readonly DrawingItem[] {
   const left = FRAME_MM + BAND_MM + MARGIN_MM;
   const top = sheet.heightMm - FRAME_MM - BAND_MM - 6.5;
   const y = FRAME_MM + BAND_MM + 4;
@@ -221,8 +221,9 @@ function captions(sheet: Sheet, scaleText: string): readonly DrawingItem[] {
     textItem(left + 10, y, 'top copper', 2.6),
     sample(left + 32, GROUND_PEN, GROUND_FILL),
     textItem(left + 42, y, 'ground, bottom side', 2.6),
-    sample(left + 74, MASK_PEN),
-    textItem(left + 84, y, 'opening in the solder mask', 2.6),
+    ...(hasSolderMask
+      ? [sample(left + 74, MASK_PEN), textItem(left + 84, y, 'opening in the solder mask', 2.6)]
+      : [textItem(left + 84, y, 'no solder mask', 2.6)]),
     textItem(left + 126, y, 'blocks on the frame: 10 mm', 2.6),
   ];
 }

@@ -4,8 +4,8 @@
 
 import type Drawing from 'dxf-writer';
 import { invariant } from '../errors.ts';
+import { arcSweepRad } from '../shape/flatten.ts';
 import type { Contour, Shape } from '../shape/shape.ts';
-import { arcSweepRad } from './arc-sweep.ts';
 import type { ExportInput, NamedFile } from './exporter.ts';
 import { plainText } from './plain-text.ts';
 import { millimetres, mmFromNm } from './wording.ts';

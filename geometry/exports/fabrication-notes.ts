@@ -1,11 +1,13 @@
 // FABRICATION.txt: everything the fabricator and the buyer must know, shortfalls first, cautions last.
 
+import type { Artwork } from '../artwork/artwork.ts';
+import type { RuleReport } from '../rules/violation.ts';
 import type { ExportInput, NamedFile } from './exporter.ts';
 import { cautions } from './fabrication-cautions.ts';
 import { boardThicknessM, shortfalls, standingNotes } from './fabrication-statements.ts';
 import { dimensionTable, predictionTable, requirementTable, ruleTable, textTable } from './fabrication-tables.ts';
 import { plainText, wrapColumns } from './plain-text.ts';
-import { micrometresOf, millimetres, millimetresOf } from './wording.ts';
+import { micrometresOf, millimetres, millimetresAtLeast, millimetresOf } from './wording.ts';
 
 /** Width of the text [characters]. */
 const COLUMNS = 96;
@@ -24,7 +26,7 @@ export function writeFabricationNotes(input: ExportInput, files: readonly NamedF
     ...section('Dimensions of the finished board', dimensionTable(input)),
     ...section(`Rules of ${input.report.fabricator}, and what this board has`, ruleTable(input.report)),
     ...section('What is predicted', predictionTable(input.design)),
-    ...section('What was asked for', requirementTable(input.design)),
+    ...section('What was asked for', requirementTable(input.design, COLUMNS)),
     ...section('Remarks', remarks(input)),
     ...section('Cautions', numbered(cautions(input))),
   ];
@@ -72,9 +74,22 @@ function fileList(files: readonly NamedFile[]): readonly string[] {
     '',
     ...paragraph(
       'Gerber files are X2, format 4.6, millimetres; their .FileFunction attribute says which layer each is, and ' +
-        '.ProjectId names the build, which has to be the same in all. There is no drill file, for there are no holes.',
+        '.ProjectId names the build, which has to be the same in all. ' +
+        (hasDrillFile(files)
+          ? 'Drill files are XNC in millimetres with decimal points; diameters are finished ones.'
+          : 'There is no drill file, for there are no holes.'),
     ),
   ];
+}
+
+function hasDrillFile(files: readonly NamedFile[]): boolean {
+  return files.some(({ name }) => name.endsWith('.drl'));
+}
+
+function holesInWords({ holes }: Artwork): string {
+  if (holes.length === 0) return 'none, plated or unplated; no slots, no edge plating';
+  const count = (plated: boolean): number => holes.filter((hole) => hole.plated === plated).length;
+  return `${count(true)} plated, ${count(false)} unplated, as in the drill files; no slots, no edge plating`;
 }
 
 function orderForm(input: ExportInput): readonly string[] {
@@ -97,14 +112,21 @@ function orderForm(input: ExportInput): readonly string[] {
     ['Solder mask', artwork.hasSolderMask ? 'both sides, open as in the mask files; any colour' : 'none, either side'],
     ['Legend', artwork.legendTop.length > 0 ? 'top side' : 'none'],
     ['Finish', finish],
-    ...report.rules
-      .filter(({ smallestNm, layer }) => smallestNm !== null && layer.startsWith('copper'))
-      .map(({ rule, layer, smallestNm }) => [`Smallest ${rule}, ${layer}`, millimetres(smallestNm!)]),
-    ['Holes', 'none, plated or unplated; no slots, no edge plating'],
+    ['Smallest conductor', smallest(report, 'width')],
+    ['Smallest space', smallest(report, 'gap')],
+    ['Holes', holesInWords(artwork)],
     ['Impedance control', 'none: line widths are part of the antenna and stay as drawn'],
     ['Electrical test', 'two nets, radiator and ground, without connection'],
   ];
   return textTable(rows, COLUMNS);
+}
+
+/** The smallest value that a rule found on any copper. */
+function smallest(report: RuleReport, rule: string): string {
+  const found = report.rules.flatMap((result) =>
+    result.rule === rule && result.layer.startsWith('copper') && result.smallestNm !== null ? [result.smallestNm] : [],
+  );
+  return found.length === 0 ? 'none' : millimetresAtLeast(Math.min(...found));
 }
 
 function stackUp({ brief }: ExportInput): readonly string[] {
@@ -130,6 +152,6 @@ function stackUp({ brief }: ExportInput): readonly string[] {
   ];
 }
 
-function remarks({ design, report }: ExportInput): readonly string[] {
-  return bullets([...report.remarks, ...design.notices.map(({ message }) => message)]);
+function remarks({ artwork, design, report }: ExportInput): readonly string[] {
+  return bullets([...artwork.remarks, ...report.remarks, ...design.notices.map(({ message }) => message)]);
 }

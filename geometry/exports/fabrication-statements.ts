@@ -1,5 +1,6 @@
 // What the fabricator must know, as sentences: the drawing's column of notes and FABRICATION.txt say the same words.
 
+import type { Artwork } from '../artwork/artwork.ts';
 import type { ExportInput } from './exporter.ts';
 import { frequency, micrometresOf, millimetresOf, RESONANCE_IN_WORDS } from './wording.ts';
 
@@ -22,11 +23,21 @@ export function standingNotes({ artwork, brief, design }: ExportInput): readonly
     artwork.hasSolderMask
       ? 'Solder mask is open over radiator and feed by intent: mask there lowers the resonance.'
       : 'No solder mask on either side, by intent: mask files hold one opening over the whole board.',
-    'No holes, plated or unplated: there is no drill file, by intent.',
+    ...holeNotes(artwork),
     'Radiator and ground are two nets without any connection: an open between them is right.',
     'All layers are seen from the top, none is mirrored; ground is drawn positive.',
-    `Routed outline within ±${millimetresOf(fabricator.outlineToleranceM)} mm, ${corners}; no score line through the edge that carries the feed.`,
+    `Routed outline within ±${millimetresOf(fabricator.outlineToleranceM)} mm, ${corners}${artwork.launches.length === 0 ? '' : '; no score line through the edge that carries the feed'}.`,
   ];
+}
+
+/** What every hole is meant to be: a shop may guess from the pads around it, and guess wrong. */
+function holeNotes(artwork: Artwork): readonly string[] {
+  if (artwork.holes.length === 0) return ['No holes, plated or unplated: there is no drill file, by intent.'];
+  return artwork.holes.map(({ label, plated, finishedDiameterNm }) =>
+    plated
+      ? `Hole for the ${label}: ${finishedDiameterNm / 1e6} mm finished, plated by intent, joined to the patch alone; the ground is open around it.`
+      : `Hole for the ${label}: ${finishedDiameterNm / 1e6} mm finished, not plated by intent, though copper surrounds it on one side. Do not plate it.`,
+  );
 }
 
 /** The frequency promised, with its interval: never a bare number. */

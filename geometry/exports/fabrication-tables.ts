@@ -6,7 +6,15 @@ import type { RuleReport } from '../rules/violation.ts';
 import { toNm } from '../units.ts';
 import type { ExportInput } from './exporter.ts';
 import { breakWords, plainText } from './plain-text.ts';
-import { decibel, frequency, millimetres, percent, RESONANCE_IN_WORDS } from './wording.ts';
+import {
+  bandwidth,
+  frequency,
+  millimetres,
+  millimetresAtLeast,
+  percent,
+  RESONANCE_IN_WORDS,
+  returnLoss,
+} from './wording.ts';
 
 /** Rows as columns with two blanks between them; the last column is wrapped where `columns` bounds the width. */
 export function textTable(rows: readonly (readonly string[])[], columns = Number.POSITIVE_INFINITY): readonly string[] {
@@ -63,17 +71,24 @@ export function ruleTable(report: RuleReport): readonly string[] {
       rule,
       layer,
       millimetres(limitNm),
-      smallestNm === null ? 'nothing' : millimetres(smallestNm),
-      marginNm === null ? '' : millimetres(marginNm),
+      smallestNm === null ? 'nothing' : millimetresAtLeast(smallestNm),
+      marginNm === null ? '' : millimetresAtLeast(marginNm),
       holds ? 'holds' : 'VIOLATED',
     ]),
   ]);
 }
 
 /** The prediction in words and numbers, with the causes of its interval. */
-export function predictionTable({ prediction }: PatchDesign): readonly string[] {
+/** Where the greatest resistance of each feed is meant. */
+const SEEN_AT: Readonly<Record<PatchDesign['feed']['kind'], string>> = {
+  inset: 'at the end of the inset',
+  'quarter-wave': "at the patch's edge",
+  probe: 'at the pin',
+};
+
+export function predictionTable({ prediction, feed }: PatchDesign): readonly string[] {
   const unknown = 'never reached with this feed';
-  const known = prediction.bandwidthHz === null ? unknown : frequency(prediction.bandwidthHz);
+  const known = prediction.bandwidthHz === null ? unknown : bandwidth(prediction.bandwidthHz);
   const rows: string[][] = [
     ['Method', 'closed-form equations, not a measurement'],
     ['Resonance', `${frequency(prediction.resonanceHz)}: ${RESONANCE_IN_WORDS[prediction.resonanceKind]}`],
@@ -81,17 +96,17 @@ export function predictionTable({ prediction }: PatchDesign): readonly string[] 
       'Interval',
       `${frequency(prediction.resonanceLowHz)} to ${frequency(prediction.resonanceHighHz)}, three sigma, from:`,
     ],
-    ...prediction.contributions.map(({ cause, halfWidthHz }) => ['', `± ${frequency(halfWidthHz)} ${cause}`]),
+    ...prediction.contributions.map(({ cause, halfWidthHz }) => ['', `± ${bandwidth(halfWidthHz)} ${cause}`]),
     [`Bandwidth, VSWR ${prediction.bandwidthVswr}`, known],
-    ['Return loss', `${decibel(prediction.returnLossAtCentreDb)} at band centre`],
-    ['', `${decibel(prediction.returnLossWorstInBandDb)} at the worst place in the band`],
+    ['Return loss', `${returnLoss(prediction.returnLossAtCentreDb)} at band centre`],
+    ['', `${returnLoss(prediction.returnLossWorstInBandDb)} at the worst place in the band`],
     ['Edge resistance', `${prediction.edgeResistanceOhm.toFixed(1)} ohm`],
     ['Efficiency', percent(prediction.radiationEfficiency)],
     ['Directivity', `${prediction.directivityDbi.toFixed(1)} dBi`],
     ['Gain', `${prediction.gainDbi.toFixed(1)} dBi`],
   ];
   if (prediction.inputResistanceOhm !== null) {
-    rows.push(['Input resistance', `${prediction.inputResistanceOhm.toFixed(1)} ohm at the end of the inset`]);
+    rows.push(['Input resistance', `${prediction.inputResistanceOhm.toFixed(1)} ohm ${SEEN_AT[feed.kind]}`]);
   }
   if (prediction.gainRealizedDbi !== null) {
     rows.push(['Gain realised', `${prediction.gainRealizedDbi.toFixed(1)} dBi with mismatch and feed line`]);
@@ -99,11 +114,11 @@ export function predictionTable({ prediction }: PatchDesign): readonly string[] 
   return textTable(rows);
 }
 
-/** Each requirement of the brief beside its prediction. */
-export function requirementTable({ requirement }: PatchDesign): readonly string[] {
-  if (requirement.length === 0) return [];
-  return textTable([
-    ['requirement', 'wanted', 'predicted', ''],
-    ...requirement.map(({ name, wanted, predicted, holds }) => [name, wanted, predicted, holds ? 'holds' : 'NOT MET']),
+/** Each requirement of the brief beside its prediction, within so many columns. */
+export function requirementTable({ requirement }: PatchDesign, columns: number): readonly string[] {
+  const rows = requirement.map(({ name, wanted, predicted, holds }) => [
+    holds ? 'holds' : 'NOT MET',
+    `${name}: wanted ${wanted}; predicted ${predicted}`,
   ]);
+  return textTable(rows, columns);
 }

@@ -2,6 +2,7 @@
 // Source: The Gerber Layer Format Specification, rev. 2024.05; section numbers stand beside each rule.
 
 import { invariant } from '../errors.ts';
+import { contourAreaNm2 } from '../shape/measure.ts';
 import type { Contour, Edge, PointNm, Shape, Stroke } from '../shape/shape.ts';
 import type { Platform } from './exporter.ts';
 
@@ -21,6 +22,15 @@ export interface GerberLayer {
   /** Value of .AperFunction for everything drawn (5.6.10). */
   readonly apertureFunction: string;
   readonly image: GerberImage;
+  /** Round pads, flashed over the image: every pad is a flash and every flash a pad (6.4). */
+  readonly pads?: readonly GerberPad[];
+}
+
+export interface GerberPad {
+  readonly centre: PointNm;
+  readonly diameterNm: number;
+  /** Value of .AperFunction, e.g. ComponentPad. */
+  readonly apertureFunction: string;
 }
 
 /** What all files of one board have in common. */
@@ -63,15 +73,44 @@ export function writeGerber(layer: GerberLayer, identity: GerberIdentity, platfo
     '%LPD*%',
     'G75*',
     'G01*',
+    ...padApertures(layer.pads ?? []),
     // One attribute in force from the first aperture to the last object: regions take it from the dictionary (5.3.1).
     `%TA.AperFunction,${layer.apertureFunction}*%`,
     ...imageLines(layer.image),
+    ...padFlashes(layer.pads ?? []),
     '%TD*%',
   ];
   const body = `${lines.join('\n')}\n`;
   // 5.6.9: over every byte before this command, line ends left out.
   const digest = platform.md5Hex(new TextEncoder().encode(body.replaceAll('\n', '')));
   return new TextEncoder().encode(`${body}%TF.MD5,${digest}*%\nM02*\n`);
+}
+
+/** Apertures of pads count from here, above those of the image. */
+const FIRST_PAD_APERTURE = 100;
+
+/** Pads that share diameter and function share an aperture. */
+function padGroups(pads: readonly GerberPad[]): readonly (readonly GerberPad[])[] {
+  const groups = new Map<string, GerberPad[]>();
+  for (const pad of pads) {
+    const key = `${pad.diameterNm} ${pad.apertureFunction}`;
+    groups.set(key, [...(groups.get(key) ?? []), pad]);
+  }
+  return [...groups.values()];
+}
+
+function padApertures(pads: readonly GerberPad[]): readonly string[] {
+  return padGroups(pads).flatMap((group, i) => [
+    `%TA.AperFunction,${group[0]!.apertureFunction}*%`,
+    defineAperture(FIRST_PAD_APERTURE + i, group[0]!.diameterNm),
+  ]);
+}
+
+function padFlashes(pads: readonly GerberPad[]): readonly string[] {
+  return padGroups(pads).flatMap((group, i) => [
+    `D${FIRST_PAD_APERTURE + i}*`,
+    ...group.map(({ centre }) => `${coordinates(centre)}D03*`),
+  ]);
 }
 
 function imageLines(image: GerberImage): readonly string[] {
@@ -89,7 +128,7 @@ function imageLines(image: GerberImage): readonly string[] {
 /** Dark outer contours with clear ones for their holes (4.10.4.6). A clear contour erases what was drawn before it, so
  *  an island within a hole has to follow the hole: the larger region first, for a region encloses only smaller ones. */
 function regionLines(shape: Shape): readonly string[] {
-  const largestFirst = [...shape].sort((a, b) => Math.abs(contourArea(b.outer)) - Math.abs(contourArea(a.outer)));
+  const largestFirst = [...shape].sort((a, b) => Math.abs(contourAreaNm2(b.outer)) - Math.abs(contourAreaNm2(a.outer)));
   const lines: string[] = [];
   let dark = true;
   const fill = (contour: Contour, wantsDark: boolean): void => {
@@ -176,14 +215,4 @@ function whole(valueNm: number): number {
 
 function samePoint(a: PointNm, b: PointNm): boolean {
   return a.xNm === b.xNm && a.yNm === b.yNm;
-}
-
-function contourArea(contour: Contour): number {
-  let from = contour.start;
-  let area = 0;
-  for (const edge of contour.edges) {
-    area += (from.xNm * edge.to.yNm - edge.to.xNm * from.yNm) / 2;
-    from = edge.to;
-  }
-  return area;
 }

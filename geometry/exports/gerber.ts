@@ -1,8 +1,9 @@
 // The six Gerber X2 files of a two-layer board: copper, solder mask, legend, profile.
 
+import type { Pad } from '../artwork/artwork.ts';
 import { guidOf } from './build-id.ts';
 import type { ExportInput, NamedFile } from './exporter.ts';
-import { type GerberLayer, writeGerber } from './gerber-writer.ts';
+import { type GerberLayer, type GerberPad, writeGerber } from './gerber-writer.ts';
 import { plainText } from './plain-text.ts';
 
 /** One Gerber file for each layer. All positive but the solder mask, whose openings are drawn; same origin, seen from
@@ -31,6 +32,11 @@ interface LayerFile {
 
 function layersOf({ artwork }: ExportInput): readonly LayerFile[] {
   const mask = artwork.hasSolderMask ? 'openings in the solder mask' : 'no solder mask: one opening over the board';
+  // A drilled coaxial pad is a component's pad (5.6.10).
+  const padsOn = (layer: Pad['layer']): readonly GerberPad[] =>
+    artwork.pads
+      .filter((pad) => pad.layer === layer)
+      .map(({ centre, diameterNm }) => ({ centre, diameterNm, apertureFunction: 'ComponentPad' }));
   return [
     {
       suffix: 'copper-top',
@@ -41,6 +47,7 @@ function layersOf({ artwork }: ExportInput): readonly LayerFile[] {
         polarity: 'Positive',
         apertureFunction: 'Conductor',
         image: { kind: 'regions', shape: artwork.copperTop },
+        pads: padsOn('copper-top'),
       },
     },
     {
@@ -52,6 +59,7 @@ function layersOf({ artwork }: ExportInput): readonly LayerFile[] {
         polarity: 'Positive',
         apertureFunction: 'Conductor',
         image: { kind: 'regions', shape: artwork.copperBottom },
+        pads: padsOn('copper-bottom'),
       },
     },
     {

@@ -4,17 +4,19 @@ import { invariant } from '../errors.ts';
 import { exportBrief } from './brief-json.ts';
 import { exportDesign } from './design-json.ts';
 import { exportDrawing } from './drawing.ts';
+import { exportDrill } from './drill.ts';
 import { exportDxf } from './dxf.ts';
 import type { ClosingExporter, Exporter, ExportInput, NamedFile } from './exporter.ts';
 import { writeFabricationNotes } from './fabrication-notes.ts';
 import { exportGerber } from './gerber.ts';
+import { writeJob } from './job.ts';
 import { writeManifest } from './manifest.ts';
 
 /** Every file format of the package. A new one is a line here. */
-const EXPORTERS: readonly Exporter[] = [exportGerber, exportDxf, exportDrawing, exportDesign, exportBrief];
+const EXPORTERS: readonly Exporter[] = [exportGerber, exportDrill, exportDxf, exportDrawing, exportDesign, exportBrief];
 
 /** What lists the files before it; the manifest is last, for it vouches for all others. */
-const CLOSING: readonly ClosingExporter[] = [writeFabricationNotes, writeManifest];
+const CLOSING: readonly ClosingExporter[] = [writeJob, writeFabricationNotes, writeManifest];
 
 /** Names that unpack on every system as they are. */
 const PORTABLE_NAME = /^[A-Za-z0-9][A-Za-z0-9.-]*$/;
@@ -22,7 +24,6 @@ const PORTABLE_NAME = /^[A-Za-z0-9][A-Za-z0-9.-]*$/;
 /** Every file of the package, by name in the order of code units; the manifest vouches for all the others.
  *  Throws (a fault of the program) when two files share a name or a name is not portable. */
 export async function packageFiles(input: ExportInput): Promise<readonly NamedFile[]> {
-  invariant(input.artwork.holes.length === 0, 'a board with holes needs drill files, which no exporter writes');
   const files: NamedFile[] = [];
   for (const write of EXPORTERS) files.push(...(await write(input)));
   for (const write of CLOSING) files.push(write(input, [...files].sort(byName)));

@@ -1,7 +1,7 @@
 // How the documents of a package write quantities: the millimetre, the gigahertz and the percent exist only here.
 
 import type { ResonanceKind } from '../patch/design.ts';
-import { toNm } from '../units.ts';
+import { formatFrequency, toNm } from '../units.ts';
 
 const NM_PER_MM = 1_000_000;
 
@@ -11,6 +11,11 @@ export function millimetres(lengthNm: number): string {
   const digits = String(Math.abs(lengthNm)).padStart(7, '0');
   const decimals = digits.slice(-6).replace(/0{1,4}$/, '');
   return `${sign}${digits.slice(0, -6)}.${decimals}`;
+}
+
+/** A measured length as millimetres to the micrometre, rounded down: what is to spare is never overstated. */
+export function millimetresAtLeast(lengthNm: number): string {
+  return millimetres(Math.floor(lengthNm / 1000) * 1000);
 }
 
 /** Metres as millimetres, to the nanometre. */
@@ -28,13 +33,23 @@ export function mmFromNm(lengthNm: number): number {
   return lengthNm / NM_PER_MM;
 }
 
-/** A frequency in the unit that suits it, with a resolution of 0.1 MHz above 1 GHz and 0.01 MHz below. */
+/** A frequency to five digits: 0.1 MHz at 2.4 GHz. */
 export function frequency(frequencyHz: number): string {
-  return frequencyHz >= 1e9 ? `${(frequencyHz / 1e9).toFixed(4)} GHz` : `${(frequencyHz / 1e6).toFixed(2)} MHz`;
+  return formatFrequency(frequencyHz, 5);
 }
 
-export function decibel(value: number | null): string {
-  return value === null ? 'not predicted' : `${value.toFixed(1)} dB`;
+/** A width of frequencies, of which three digits mean something. */
+export function bandwidth(widthHz: number): string {
+  return formatFrequency(widthHz, 3);
+}
+
+/** Beyond this no real board and no bench can tell one return loss from another [dB]. */
+const PERFECT_DB = 40;
+
+/** A return loss. */
+export function returnLoss(valueDb: number | null): string {
+  if (valueDb === null) return 'not predicted';
+  return valueDb > PERFECT_DB ? `more than ${PERFECT_DB} dB` : `${valueDb.toFixed(1)} dB`;
 }
 
 export function percent(fraction: number): string {

@@ -2,18 +2,19 @@
 
 import { refuse } from '../errors.ts';
 import { toNm } from '../units.ts';
-import type { BoardSize, InsetFeed, RectangularRadiator } from './design.ts';
+import type { BoardSize, RectangularRadiator } from './design.ts';
 
 function millimetres(nm: number): string {
   return `${nm / 1e6} mm`;
 }
 
-/** Refuses a board that does not hold patch and feed line with the fabricator's distance to its edge.
+/** Refuses a board that does not hold patch and feed with the fabricator's distance to its edge.
+ *  @param frontEdgeM  from the board's edge to the patch's front edge
  *  Compared in whole nanometres, as they are drawn.
  *  Throws: EngineError "board.small", "board.cornerRadius". */
 export function demandRoom(
   radiator: RectangularRadiator,
-  feed: InsetFeed,
+  frontEdgeM: number,
   board: BoardSize,
   copperToEdgeM: number,
 ): void {
@@ -22,7 +23,7 @@ export function demandRoom(
   const patchLength = toNm(radiator.lengthM);
   const width = toNm(board.widthM);
   const length = toNm(board.lengthM);
-  const line = toNm(feed.lineLengthM);
+  const line = toNm(frontEdgeM);
   const needWidth = patchWidth + 2 * edge;
   if (width < needWidth) {
     refuse({

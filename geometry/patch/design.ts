@@ -27,6 +27,43 @@ export interface InsetFeed {
   readonly lineLengthM: number;
 }
 
+/** A plain edge feed through a quarter-wave transformer. */
+export interface QuarterWaveFeed {
+  readonly kind: 'quarter-wave';
+  /** The line from the board's edge. */
+  readonly lineWidthM: number;
+  /** From the board's edge to the transformer [m]. */
+  readonly lineLengthM: number;
+  /** The narrow section between line and patch. */
+  readonly transformerWidthM: number;
+  readonly transformerLengthM: number;
+}
+
+/** A coaxial pin from below. */
+export interface ProbeFeed {
+  readonly kind: 'probe';
+  /** From the patch's centre towards its front edge [m]. */
+  readonly offsetM: number;
+  readonly pinDiameterM: number;
+  /** Finished hole through patch and slab. */
+  readonly holeDiameterM: number;
+  /** Copper ring on the patch; the patch itself where it is larger. */
+  readonly padDiameterM: number;
+  /** Opening in the ground around the pin. */
+  readonly clearanceDiameterM: number;
+  /** Whether the hole is plated, by intent. */
+  readonly plated: boolean;
+  /** From the board's edge to the patch's front edge [m]. */
+  readonly lineLengthM: number;
+}
+
+export type Feed = InsetFeed | QuarterWaveFeed | ProbeFeed;
+
+/** From the board's edge to the patch's front edge [m]. */
+export function frontEdgeM(feed: Feed): number {
+  return feed.kind === 'quarter-wave' ? feed.lineLengthM + feed.transformerLengthM : feed.lineLengthM;
+}
+
 export interface BoardSize {
   readonly widthM: number;
   readonly lengthM: number;
@@ -56,7 +93,8 @@ export interface Prediction {
   readonly bandwidthCriticalHz: number;
   /** Resistance at the radiating edge of the bare patch, loss included [Ω]. */
   readonly edgeResistanceOhm: number;
-  /** Greatest resistance that the feed sees at the inset's end [Ω]; null without a feed. */
+  /** Greatest resistance that the feed sees [Ω]: at the inset's end, at the patch's edge, at the pin; null without a
+   *  feed. */
   readonly inputResistanceOhm: number | null;
   readonly returnLossAtCentreDb: number | null;
   readonly returnLossWorstInBandDb: number | null;
@@ -85,7 +123,7 @@ export interface Requirement {
 export interface PatchDesign {
   readonly kind: 'patch-design';
   readonly radiator: RectangularRadiator;
-  readonly feed: InsetFeed;
+  readonly feed: Feed;
   readonly board: BoardSize;
   readonly prediction: Prediction;
   readonly requirement: readonly Requirement[];

@@ -1,10 +1,10 @@
-// Where the inset feed's law was verified, how wrong it may be, and what a practitioner should hear of the feed.
+// Where each feed's law was verified, how wrong it may be, and what a practitioner should hear of the feed.
 
 import type { Brief } from '../brief/brief.ts';
 import type { Notice } from '../errors.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units.ts';
 import type { PatchOnSlab } from './bare-resonance.ts';
-import type { BoardSize, InsetFeed } from './design.ts';
+import { type BoardSize, type Feed, frontEdgeM, type InsetFeed, type ProbeFeed } from './design.ts';
 import type { FeedLine } from './inset-feed.ts';
 import type { QualitySplit } from './quality.ts';
 
@@ -81,6 +81,57 @@ export function feedRange(
   };
 }
 
+/** A plain edge feed was held against four full-wave cases, all with a 50 ohm line: best match within 0.15 %, the
+ *  resistance at resonance within 5 %. A thinner transformer extrapolates the law. */
+const EDGE_ERROR = 0.004;
+const EDGE_ERROR_THIN = 0.008;
+
+export function edgeRange(
+  patch: PatchOnSlab,
+  transformerWidthM: number,
+): { readonly modelError: number; readonly notices: readonly Notice[] } {
+  const share = transformerWidthM / patch.widthM;
+  const range = INSET_BOX.lineOverWidth;
+  const isIn = share >= range.minimum / (1 + BORDER) && share <= range.maximum * (1 + BORDER);
+  return {
+    modelError: isIn ? EDGE_ERROR : EDGE_ERROR_THIN,
+    notices: isIn
+      ? []
+      : [
+          {
+            code: 'feed.range',
+            message: `The transformer is ${share.toPrecision(2)} of the patch width, outside ${range.minimum} to ${range.maximum}, where a line at the edge was verified: best match and resistance are unverified.`,
+          },
+        ],
+  };
+}
+
+/** Three full-wave probe feeds hold the resistance; none holds the best match, which rests on the pin's reactance. */
+const PROBE_ERROR = 0.004;
+/** Height over the free-space wavelength above which the pin's reactance spoils the match. */
+const PROBE_THICK = 0.03;
+
+export function probeRange(
+  patch: PatchOnSlab,
+  feed: ProbeFeed,
+  centreHz: number,
+): { readonly modelError: number; readonly notices: readonly Notice[] } {
+  const notices: Notice[] = [];
+  const height = (patch.heightM * centreHz) / SPEED_OF_LIGHT_M_PER_S;
+  if (height > PROBE_THICK) {
+    notices.push({
+      code: 'feed.thickProbe',
+      message: `The board is ${height.toFixed(3)} wavelengths thick, over ${PROBE_THICK}: the pin's inductance shifts and narrows the match. A thinner board, a thicker pin or an inset feed would mend it.`,
+    });
+  }
+  const share = feed.offsetM / patch.lengthM;
+  notices.push({
+    code: 'feed.probe',
+    message: `The resistance at the pin was held against full-wave figures of three lossless patches: within 5 % up to 0.3 of the length from the centre, 11 % low at the edge; this pin stands at ${share.toFixed(2)}. The best match, with the pin's reactance, is unverified.`,
+  });
+  return { modelError: PROBE_ERROR, notices };
+}
+
 /** Notch narrower than this over the height pulls the line's impedance far down. */
 const NARROW_NOTCH = 0.3;
 const WIDE_LINE_OVER_GUIDED_WAVELENGTH = 1 / 8;
@@ -90,9 +141,10 @@ const NARROW_MARGIN_OVER_HEIGHT = 6;
 export interface FeedFacts {
   readonly brief: Brief;
   readonly patch: PatchOnSlab;
-  readonly feed: InsetFeed;
+  readonly feed: Feed;
   readonly board: BoardSize;
-  readonly line: FeedLine;
+  /** Null for a feed without a line. */
+  readonly line: FeedLine | null;
   readonly split: QualitySplit;
   readonly bandwidthHz: number | null;
   readonly centreHz: number;
@@ -104,34 +156,19 @@ function mm(lengthM: number): string {
 
 /** Remarks on feed, line and board. */
 export function feedNotices(facts: FeedFacts): readonly Notice[] {
-  const { brief, patch, feed, board, line, split, bandwidthHz, centreHz } = facts;
+  const { brief, patch, feed, board, line, split, bandwidthHz } = facts;
   const notices: Notice[] = [];
   const say = (code: string, message: string): void => {
     notices.push({ code, message });
   };
   const reference = brief.match.referenceOhm;
-  if (feed.insetDepthM > 0 && feed.notchGapM < NARROW_NOTCH * patch.heightM) {
+  if (feed.kind === 'inset' && feed.insetDepthM > 0 && feed.notchGapM < NARROW_NOTCH * patch.heightM) {
     say(
       'feed.narrowNotch',
       `The notch gap of ${mm(feed.notchGapM)} is under 0.3 of the board's height: the flanks pull the line's impedance far below ${reference} ohm. ${mm(0.6 * patch.heightM)} or more disturbs it little.`,
     );
   }
-  const guidedM = SPEED_OF_LIGHT_M_PER_S / (centreHz * Math.sqrt(line.effectivePermittivity));
-  if (
-    feed.lineWidthM > WIDE_LINE_OVER_GUIDED_WAVELENGTH * guidedM ||
-    feed.lineWidthM > WIDE_LINE_OVER_PATCH * patch.widthM
-  ) {
-    say(
-      'feed.wideLine',
-      `The feed line is ${mm(feed.lineWidthM)} wide, wide for the patch or the wavelength: it radiates and couples. A thinner board or a higher impedance with a transformer would mend it.`,
-    );
-  }
-  if (Math.abs(line.impedanceOhm / reference - 1) > 0.1) {
-    say(
-      'feed.lineImpedance',
-      `The feed line has ${line.impedanceOhm.toFixed(1)} ohm, not ${reference} ohm: its length to the board's edge now shapes the match.`,
-    );
-  }
+  if (line !== null && feed.kind !== 'probe') sayLine(say, facts, line, feed.lineWidthM);
   if (bandwidthHz !== null && bandwidthHz < brief.band.highHz - brief.band.lowHz) {
     say(
       'band.wide',
@@ -146,8 +183,8 @@ export function feedNotices(facts: FeedFacts): readonly Notice[] {
   }
   const margin = Math.min(
     (board.widthM - patch.widthM) / 2,
-    board.lengthM - feed.lineLengthM - patch.lengthM,
-    feed.lineLengthM,
+    board.lengthM - frontEdgeM(feed) - patch.lengthM,
+    frontEdgeM(feed),
   );
   // A nanometre of slack: margins are differences of rounded sizes.
   if (margin < NARROW_MARGIN_OVER_HEIGHT * patch.heightM - 1e-9) {
@@ -157,4 +194,27 @@ export function feedNotices(facts: FeedFacts): readonly Notice[] {
     );
   }
   return notices;
+}
+
+/** Remarks on the line from the connector. */
+function sayLine(
+  say: (code: string, message: string) => void,
+  { brief, patch, centreHz }: FeedFacts,
+  line: FeedLine,
+  lineWidthM: number,
+): void {
+  const reference = brief.match.referenceOhm;
+  const guidedM = SPEED_OF_LIGHT_M_PER_S / (centreHz * Math.sqrt(line.effectivePermittivity));
+  if (lineWidthM > WIDE_LINE_OVER_GUIDED_WAVELENGTH * guidedM || lineWidthM > WIDE_LINE_OVER_PATCH * patch.widthM) {
+    say(
+      'feed.wideLine',
+      `The feed line is ${mm(lineWidthM)} wide, wide for the patch or the wavelength: it radiates and couples. A thinner board or a higher impedance with a transformer would mend it.`,
+    );
+  }
+  if (Math.abs(line.impedanceOhm / reference - 1) > 0.1) {
+    say(
+      'feed.lineImpedance',
+      `The feed line has ${line.impedanceOhm.toFixed(1)} ohm, not ${reference} ohm: its length to the board's edge now shapes the match.`,
+    );
+  }
 }

@@ -12,8 +12,11 @@ export function reflection(impedance: Complex, referenceOhm: number): Complex {
   return divide(subtract(impedance, reference), add(impedance, reference));
 }
 
+/** Reflections below this are noise of the arithmetic: return losses end at 120 dB, and stay finite. */
+const LEAST_REFLECTION = 1e-6;
+
 export function returnLossDb(reflectionMagnitude: number): number {
-  return -20 * Math.log10(reflectionMagnitude);
+  return -20 * Math.log10(Math.max(LEAST_REFLECTION, reflectionMagnitude));
 }
 
 /** Reflection at the far end of a line: the load's, referred to the line, turned and weakened, referred back.

@@ -2,47 +2,17 @@
 
 import type { Artwork, LaunchEdge } from '../artwork/artwork.ts';
 import { flatten } from '../shape/flatten.ts';
+import { type DistanceNm, distanceBetween, nearerOf, segmentDistance } from '../shape/measure.ts';
 import { cornersOf } from '../shape/primitives.ts';
 import { type Edge, type PointNm, point } from '../shape/shape.ts';
 import { FACING_CHORD_NM } from './facing.ts';
-import { type Finding, gather, millimetres, type Place } from './finding.ts';
+import { type Finding, gather, millimetres, type Place, tightest } from './finding.ts';
 import type { Limits } from './limits.ts';
 import type { LayerName } from './violation.ts';
 
-interface Nearest {
-  readonly distanceNm: number;
-  readonly from: PointNm;
-  readonly to: PointNm;
-}
-
-function between(from: PointNm, to: PointNm): Nearest {
-  return { distanceNm: Math.hypot(from.xNm - to.xNm, from.yNm - to.yNm), from, to };
-}
-
-function nearer(a: Nearest | null, b: Nearest | null): Nearest | null {
-  if (a === null || b === null) return a ?? b;
-  return b.distanceNm < a.distanceNm ? b : a;
-}
-
-/** The point of the segment a–b nearest to p, not rounded. */
-function projectOn(p: PointNm, a: PointNm, b: PointNm): PointNm {
-  const dx = b.xNm - a.xNm;
-  const dy = b.yNm - a.yNm;
-  const t = Math.min(1, Math.max(0, ((p.xNm - a.xNm) * dx + (p.yNm - a.yNm) * dy) / (dx * dx + dy * dy)));
-  return point(a.xNm + t * dx, a.yNm + t * dy);
-}
-
-/** From a stretch of copper a–b to a straight stretch of the outline c–d. Exact. */
-function toStraight(a: PointNm, b: PointNm, c: PointNm, d: PointNm): Nearest {
-  return [between(b, projectOn(b, c, d)), between(projectOn(c, a, b), c), between(projectOn(d, a, b), d)].reduce(
-    (best, next) => (next.distanceNm < best.distanceNm ? next : best),
-    between(a, projectOn(a, c, d)),
-  );
-}
-
 /** From a point of the copper to a rounded corner of the outline. The corner bulges outward, so a stretch of copper
  *  comes nearest to it with an end, and the ends of flattened arcs lie on their arcs. */
-function toArc(p: PointNm, from: PointNm, edge: Extract<Edge, { kind: 'arc' }>): Nearest {
+function toArc(p: PointNm, from: PointNm, edge: Extract<Edge, { kind: 'arc' }>): DistanceNm {
   const dx = p.xNm - edge.centre.xNm;
   const dy = p.yNm - edge.centre.yNm;
   const away = Math.hypot(dx, dy);
@@ -50,11 +20,10 @@ function toArc(p: PointNm, from: PointNm, edge: Extract<Edge, { kind: 'arc' }>):
     (from.xNm - edge.centre.xNm) * dy - (from.yNm - edge.centre.yNm) * dx >= 0 &&
     dx * (edge.to.yNm - edge.centre.yNm) - dy * (edge.to.xNm - edge.centre.xNm) >= 0;
   if (!sector || away === 0) {
-    const [first, last] = [between(p, from), between(p, edge.to)];
-    return last.distanceNm < first.distanceNm ? last : first;
+    return nearerOf(distanceBetween(p, from), distanceBetween(p, edge.to));
   }
   const radius = Math.hypot(from.xNm - edge.centre.xNm, from.yNm - edge.centre.yNm);
-  return between(p, point(edge.centre.xNm + (dx / away) * radius, edge.centre.yNm + (dy / away) * radius));
+  return distanceBetween(p, point(edge.centre.xNm + (dx / away) * radius, edge.centre.yNm + (dy / away) * radius));
 }
 
 /** The parts of a segment outside a launch's strip: along its stretch of edge, as deep as the limit, both borders
@@ -117,25 +86,19 @@ export function findToEdge(artwork: Artwork, limits: Limits): Finding {
     }
     const found = outline.edges.flatMap((edge, i): Place[] => {
       const from = corners[i]!;
-      let best: Nearest | null = null;
-      for (const [a, b] of stretches) {
-        best =
-          edge.kind === 'line'
-            ? nearer(best, toStraight(a, b, from, edge.to))
-            : nearer(best, nearer(toArc(a, from, edge), toArc(b, from, edge)));
-      }
-      return best === null ? [] : [placeOf(best, edge.kind, layer, limits)];
+      const distances = stretches.map(([a, b]) =>
+        edge.kind === 'line'
+          ? segmentDistance(a, b, from, edge.to)
+          : nearerOf(toArc(a, from, edge), toArc(b, from, edge)),
+      );
+      return distances.length === 0 ? [] : [placeOf(distances.reduce(nearerOf), edge.kind, layer, limits)];
     });
-    const nearest = found.reduce<Place | null>(
-      (best, place) => (best === null || place.measuredNm < best.measuredNm ? place : best),
-      null,
-    );
-    return { nearest, below: found.filter(({ marginNm }) => marginNm < 0) };
+    return { nearest: tightest(found), below: found.filter(({ marginNm }) => marginNm < 0) };
   });
   return gather(limitNm, 'copper-top', parts);
 }
 
-function placeOf(nearest: Nearest, kind: Edge['kind'], layer: LayerName, limits: Limits): Place {
+function placeOf(nearest: DistanceNm, kind: Edge['kind'], layer: LayerName, limits: Limits): Place {
   const found = Math.round(nearest.distanceNm);
   const isRounding = kind === 'arc' && Math.abs(found - limits.copperToEdge) <= ROUNDING_NM;
   const measuredNm = isRounding ? limits.copperToEdge : found;

@@ -4,9 +4,17 @@ import type { Artwork } from '../artwork/artwork.ts';
 import type { Fabricator } from '../fabricator/fabricator.ts';
 import { findBoardSize, findToEdge } from './board.ts';
 import { findCorners, findGaps, findWidths } from './copper.ts';
+import {
+  findDepths,
+  findHolesToCopper,
+  findHolesToEdge,
+  findPlatedHoles,
+  findRings,
+  findUnplatedHoles,
+} from './drill.ts';
 import { type Finding, millimetres } from './finding.ts';
 import { type Limits, limitsOf } from './limits.ts';
-import { findLegendWidth, findMaskWebs } from './print.ts';
+import { findLegendClearance, findLegendWidth, findMaskWebs } from './print.ts';
 import type { RuleReport, RuleResult, Violation } from './violation.ts';
 
 /** A rule: its name, and what it finds. */
@@ -24,12 +32,21 @@ const RULES: readonly Rule[] = [
   { name: 'board-size', find: findBoardSize },
   { name: 'mask-web', find: findMaskWebs },
   { name: 'legend-width', find: findLegendWidth },
+  { name: 'legend-clearance', find: findLegendClearance },
+  { name: 'plated-hole', find: findPlatedHoles },
+  { name: 'plated-depth', find: findDepths },
+  { name: 'unplated-hole', find: findUnplatedHoles },
+  { name: 'ring', find: findRings },
+  { name: 'hole-to-copper', find: findHolesToCopper },
+  { name: 'hole-to-edge', find: findHolesToEdge },
 ];
 
 export interface CheckInput {
   readonly artwork: Artwork;
   readonly fabricator: Fabricator;
   readonly copperBaseM: number;
+  /** Finished board with its coppers; 0 where no hole is plated. */
+  readonly boardThicknessM?: number;
 }
 
 function exemptions(artwork: Artwork): readonly string[] {
@@ -42,8 +59,8 @@ function exemptions(artwork: Artwork): readonly string[] {
 /** Checks an artwork against a fabricator's limits for its copper: every rule with its limit, the smallest found and
  *  where, and every place where one does not hold.
  *  Throws: EngineError "copper.tooHeavy". */
-export function checkRules({ artwork, fabricator, copperBaseM }: CheckInput): RuleReport {
-  const limits = limitsOf(fabricator, copperBaseM);
+export function checkRules({ artwork, fabricator, copperBaseM, boardThicknessM = 0 }: CheckInput): RuleReport {
+  const limits = limitsOf(fabricator, copperBaseM, boardThicknessM);
   const rules: RuleResult[] = [];
   const violations: Violation[] = [];
   for (const { name, find } of RULES) {

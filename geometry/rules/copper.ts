@@ -4,9 +4,10 @@ import type { Artwork } from '../artwork/artwork.ts';
 import { crossSign } from '../shape/predicates.ts';
 import { cornersOf } from '../shape/primitives.ts';
 import type { PointNm, Shape } from '../shape/shape.ts';
-import { type Facing, findFacing } from './facing.ts';
-import { type Finding, gather, millimetres, type Place } from './finding.ts';
+import { DISTANCE_SLACK_NM, type Facing, findFacing } from './facing.ts';
+import { type Finding, gather, millimetres, type Place, tightest } from './finding.ts';
 import type { Limits } from './limits.ts';
+import type { Medium } from './sight.ts';
 import type { LayerName } from './violation.ts';
 
 const COPPER_LAYERS = [
@@ -14,46 +15,60 @@ const COPPER_LAYERS = [
   ['copper-bottom', 'copperBottom'],
 ] as const satisfies readonly (readonly [LayerName, keyof Artwork])[];
 
-/** Places found by distance, with a sentence for each. */
+/** Places found by distance, with a sentence for each. A distance between two whole nanometres counts as the lower. */
 export function placesOf(
   shape: Shape,
-  across: 'clearance' | 'copper',
+  across: Medium,
   limitNm: number,
   layer: LayerName,
-  say: (measured: string) => string,
+  say: (measuredNm: number) => string,
 ): { readonly nearest: Place | null; readonly below: readonly Place[] } {
   const { nearest, below } = findFacing(shape, across, limitNm);
   const place = (facing: Facing): Place => {
-    const measuredNm = Math.round(facing.distanceNm);
+    const measuredNm = Math.floor(facing.distanceNm + DISTANCE_SLACK_NM);
     return {
       layer,
       measuredNm,
       marginNm: measuredNm - limitNm,
       from: facing.from,
       to: facing.to,
-      message: say(millimetres(measuredNm)),
+      message: say(measuredNm),
     };
   };
   return { nearest: nearest === null ? null : place(nearest), below: below.map(place) };
 }
 
 function weight(limits: Limits): string {
-  return `${(limits.copperBaseM * 1e6).toFixed(0)} µm base copper`;
+  return `${(limits.copperBaseM * 1e6).toFixed(0)} µm copper`;
+}
+
+/** What is drawn, by the dimension that has this size on this layer, if one of those named has. */
+function drawn(artwork: Artwork, layer: LayerName, names: readonly string[], measuredNm: number): string | null {
+  if (layer !== 'copper-top') return null;
+  const dimension = artwork.dimensions.find(({ name, valueNm }) => names.includes(name) && valueNm === measuredNm);
+  return dimension === undefined ? null : `The ${dimension.label} is drawn at ${millimetres(measuredNm)}`;
 }
 
 /** Clearance between copper that faces copper, in one contour or in two. */
 export function findGaps(artwork: Artwork, limits: Limits): Finding {
-  const say = (measured: string): string =>
-    `A gap of ${measured} is drawn; ${limits.fabricator} etches no space below ${millimetres(limits.space)} in ${weight(limits)}, and would bridge it or send the board back.`;
-  const parts = COPPER_LAYERS.map(([layer, key]) => placesOf(artwork[key], 'clearance', limits.space, layer, say));
+  const parts = COPPER_LAYERS.map(([layer, key]) =>
+    placesOf(artwork[key], 'clearance', limits.space, layer, (measuredNm) => {
+      const what = drawn(artwork, layer, ['notchGap'], measuredNm) ?? `A gap of ${millimetres(measuredNm)} is drawn`;
+      return `${what}; ${limits.fabricator} etches no space below ${millimetres(limits.space)} in ${weight(limits)}, and would bridge it or send the board back.`;
+    }),
+  );
   return gather(limits.space, 'copper-top', parts);
 }
 
 /** Copper between clearance and clearance. */
 export function findWidths(artwork: Artwork, limits: Limits): Finding {
-  const say = (measured: string): string =>
-    `Copper ${measured} wide is drawn; ${limits.fabricator} etches no trace below ${millimetres(limits.trace)} in ${weight(limits)}, and would thin it, break it or send the board back.`;
-  const parts = COPPER_LAYERS.map(([layer, key]) => placesOf(artwork[key], 'copper', limits.trace, layer, say));
+  const names = ['lineWidth', 'lineWidthInNotch'];
+  const parts = COPPER_LAYERS.map(([layer, key]) =>
+    placesOf(artwork[key], 'copper', limits.trace, layer, (measuredNm) => {
+      const what = drawn(artwork, layer, names, measuredNm) ?? `Copper ${millimetres(measuredNm)} wide is drawn`;
+      return `${what}; ${limits.fabricator} etches no trace below ${millimetres(limits.trace)} in ${weight(limits)}, and would thin it, break it or send the board back.`;
+    }),
+  );
   return gather(limits.trace, 'copper-top', parts);
 }
 
@@ -86,11 +101,7 @@ export function findCorners(artwork: Artwork, limits: Limits): Finding {
         message: `A corner sharper than 60° is drawn at x = ${millimetres(facing.from.xNm)}, y = ${millimetres(facing.from.yNm)}: its tip etches away or traps etchant.`,
       };
     });
-    const nearest = places.reduce<Place | null>(
-      (best, place) => (best === null || place.measuredNm < best.measuredNm ? place : best),
-      null,
-    );
-    return { nearest, below: places.filter(({ marginNm }) => marginNm < 0) };
+    return { nearest: tightest(places), below: places.filter(({ marginNm }) => marginNm < 0) };
   });
   return gather(limitNm, 'copper-top', parts);
 }

@@ -3,25 +3,37 @@
 // Two edges face where a connecting segment p–q lies wholly in the clearance (or the copper) and meets both at 60° or
 // more, so that the two sides of a corner do not count against each other.
 //
-//        ───────p────────  e1        For a given direction of p–q, sliding it along towards the point where the two
-//               │                    lines meet shortens it until p or q comes to the end of its edge, or until it
-//               │                    brushes past a corner of something between. So the shortest one starts at an
-//        ───────q────────  e2        end of an edge, or at the foot of the perpendicular from some corner; from there
-//                                    the other end is a clamp: the foot on the other edge, moved into the interval
-//                                    that both angles and the edge's ends leave. Parallel edges attain it at such a
-//                                    start too.
+//      ──────p───────  e1      Hold the direction of p–q and slide it along: its length changes evenly, so it is
+//            │    ╱╲           least where the sliding ends, and that is at a corner: p or q is an end of its edge,
+//            │   ╱  ╲          or p–q brushes past a corner of something that stands between. So it is enough to turn
+//      ──────q───────  e2      a segment around every corner, through all directions that the corner sees.
+//
+// Around a corner, between two directions in which other corners lie, the same two edges are met. There the length is
+// h/cos(δ), or the sum of two such terms where the segment passes the corner; h is the corner's distance from the
+// edge's line and δ the lean from its normal. Both are convex in the direction, and both angles allow one interval of
+// it, so each such piece has its least length by a clamp or a bisection. Nothing is sampled.
 
-import { flatten } from '../shape/flatten.ts';
-import type { PointNm, Ring, Shape } from '../shape/shape.ts';
+import { flattenEdge } from '../shape/flatten.ts';
+import { cornersOf } from '../shape/primitives.ts';
+import { type Contour, type PointNm, point, type Shape } from '../shape/shape.ts';
+import {
+  type Circle,
+  type Corner,
+  LEAN_RAD,
+  lookAround,
+  type Medium,
+  type Side,
+  type SourceEdge,
+  sidesOf,
+} from './sight.ts';
+import { type Candidate, onArcs, SEARCH_CHORD_NM } from './to-arcs.ts';
 
-/** Chord error for arcs [nm]: distances to arcs are too short by no more. Straight edges are exact. */
+/** Chord error for arcs where a rule measures against a polygon [nm]. */
 export const FACING_CHORD_NM = 1000;
-/** tan 30°: how far the connecting segment may lean from an edge's normal. */
-const LEAN = Math.tan(Math.PI / 6);
-/** Lean that rounding may add [1]; a thousandth of a degree. */
-const LEAN_SLACK = 2e-5;
-/** Distances are compared to within this [nm]: rounding of feet on slanted edges. */
+/** Distances are compared to within this [nm]: rounding of doubles. */
 export const DISTANCE_SLACK_NM = 1e-3;
+/** Steps of bisection: more than a double has bits. */
+const BISECTIONS = 60;
 
 /** Where two edges come nearest while they face. */
 export interface Facing {
@@ -30,207 +42,169 @@ export interface Facing {
   readonly to: PointNm;
 }
 
-interface Side {
-  readonly ax: number;
-  readonly ay: number;
-  readonly bx: number;
-  readonly by: number;
-  readonly length: number;
-  /** Unit direction; copper lies to the left. */
-  readonly ux: number;
-  readonly uy: number;
-  /** The ring it belongs to and its place in it, for telling neighbours. */
-  readonly ring: number;
-  readonly index: number;
-  readonly count: number;
-}
-
-interface Candidate {
-  readonly distance: number;
-  readonly px: number;
-  readonly py: number;
-  readonly qx: number;
-  readonly qy: number;
-  readonly pair: number;
-}
-
-function sidesOf(rings: readonly Ring[]): Side[] {
-  return rings.flatMap((points, ring) =>
-    points.map((a, index) => {
-      const b = points[(index + 1) % points.length]!;
-      const dx = b.xNm - a.xNm;
-      const dy = b.yNm - a.yNm;
-      const length = Math.hypot(dx, dy);
-      return {
-        ax: a.xNm,
-        ay: a.yNm,
-        bx: b.xNm,
-        by: b.yNm,
-        length,
-        ux: dx / length,
-        uy: dy / length,
-        ring,
-        index,
-        count: points.length,
-      };
-    }),
-  );
-}
-
 function areNeighbours(a: Side, b: Side): boolean {
   if (a.ring !== b.ring) return false;
   const apart = Math.abs(a.index - b.index);
   return apart <= 1 || apart === a.count - 1;
 }
 
-/** The nearest allowed q on `other` from p on `own`, or null. `sign` is +1 across clearance (to the right of an edge),
- *  −1 across copper. */
-function nearestFacing(
-  px: number,
-  py: number,
-  own: Side,
-  other: Side,
-  sign: number,
-): { qx: number; qy: number; distance: number } | null {
-  // Frame of the other edge: s along it, height towards the side from which p must come.
-  const rx = px - other.ax;
-  const ry = py - other.ay;
-  const foot = rx * other.ux + ry * other.uy;
-  const height = sign * (rx * other.uy - ry * other.ux);
-  if (height <= 0) return null;
-  const lean = LEAN + LEAN_SLACK;
-  let low = Math.max(0, foot - height * lean);
-  let high = Math.min(other.length, foot + height * lean);
-  // Frame of the own edge: the segment must leave within 30° of its normal n, so |d·u| ≤ lean · d·n.
-  const nx = sign * own.uy;
-  const ny = -sign * own.ux;
-  // d(s) = a + s u − p; both bounds are linear in s: ±d·u ≤ lean d·n.
-  const dux = -rx * own.ux - ry * own.uy;
-  const duSlope = other.ux * own.ux + other.uy * own.uy;
-  const dn = -rx * nx - ry * ny;
-  const dnSlope = other.ux * nx + other.uy * ny;
-  for (const side of [1, -1]) {
-    // side·(dux + s duSlope) − lean (dn + s dnSlope) ≤ 0
-    const constant = side * dux - lean * dn;
-    const slope = side * duSlope - lean * dnSlope;
-    if (Math.abs(slope) < 1e-12) {
-      if (constant > DISTANCE_SLACK_NM) return null;
-    } else if (slope > 0) high = Math.min(high, -constant / slope);
-    else low = Math.max(low, -constant / slope);
-  }
-  if (low > high + DISTANCE_SLACK_NM) return null;
-  const s = Math.min(Math.max(foot, low), Math.max(low, high));
+/** Difference of two directions, turned into [−π, π). */
+function turnBetween(fromRad: number, toRad: number): number {
+  const whole = 2 * Math.PI;
+  const turn = (toRad - fromRad + Math.PI) % whole;
+  return (turn < 0 ? turn + whole : turn) - Math.PI;
+}
+
+/** Distance of a corner from the line of a side. */
+function height(corner: Corner, side: Side): number {
+  return (side.ax - corner.x) * side.nx + (side.ay - corner.y) * side.ny;
+}
+
+/** Shortest segment from the corner, as an end of `own`, to `other` between two directions, given as leans from the
+ *  other's normal. */
+function fromCorner(corner: Corner, own: Side, other: Side, low: number, high: number): Candidate | null {
+  // It leaves `own` within the lean of that side's normal, which points the other way.
+  const square = turnBetween(other.into, own.into + Math.PI);
+  const least = Math.max(low, -LEAN_RAD, square - LEAN_RAD);
+  const most = Math.min(high, LEAN_RAD, square + LEAN_RAD);
+  if (least > most) return null;
+  const lean = Math.min(Math.max(0, least), most);
+  const distance = height(corner, other) / Math.cos(lean);
+  const angle = other.into + lean;
   return {
-    qx: other.ax + s * other.ux,
-    qy: other.ay + s * other.uy,
-    distance: Math.hypot(s - foot, height),
+    distance,
+    px: corner.x,
+    py: corner.y,
+    qx: corner.x + distance * Math.cos(angle),
+    qy: corner.y + distance * Math.sin(angle),
   };
 }
 
-/** Whether p–q, moved sideways by `shift`, crosses any edge between its ends. */
-function crosses(c: Candidate, sides: readonly Side[], shift: number): boolean {
-  const dx = c.qx - c.px;
-  const dy = c.qy - c.py;
-  const length = c.distance;
-  const ox = c.px - (dy / length) * shift;
-  const oy = c.py + (dx / length) * shift;
-  // Nearer than this to either end it is the edge on which the end lies.
-  const skip = Math.min(0.25, 2 / length);
-  for (const side of sides) {
-    const sa = dx * (side.ay - oy) - dy * (side.ax - ox);
-    const sb = dx * (side.by - oy) - dy * (side.bx - ox);
-    if (sa > 0 === sb > 0) continue;
-    const k = sa / (sa - sb);
-    const x = side.ax + k * (side.bx - side.ax) - ox;
-    const y = side.ay + k * (side.by - side.ay) - oy;
-    const t = (x * dx + y * dy) / (length * length);
-    if (t > skip && t < 1 - skip) return true;
+/** Shortest segment from `back` past the corner to `front`; directions as leans from the front's normal. */
+function pastCorner(corner: Corner, back: Side, front: Side, low: number, high: number): Candidate | null {
+  const square = turnBetween(front.into, back.into + Math.PI);
+  const a = height(corner, front);
+  const b = height(corner, back);
+  let least = Math.max(low, -LEAN_RAD, square - LEAN_RAD);
+  let most = Math.min(high, LEAN_RAD, square + LEAN_RAD);
+  if (least > most) return null;
+  const slope = (lean: number): number =>
+    (a * Math.sin(lean)) / Math.cos(lean) ** 2 + (b * Math.sin(lean - square)) / Math.cos(lean - square) ** 2;
+  let lean = 0;
+  if (square === 0) lean = Math.min(Math.max(0, least), most);
+  else if (slope(least) >= 0) lean = least;
+  else if (slope(most) <= 0) lean = most;
+  else {
+    for (let i = 0; i < BISECTIONS; i++) {
+      lean = (least + most) / 2;
+      if (slope(lean) > 0) most = lean;
+      else least = lean;
+    }
   }
-  return false;
+  const toFront = a / Math.cos(lean);
+  const toBack = b / Math.cos(lean - square);
+  const [cos, sin] = [Math.cos(front.into + lean), Math.sin(front.into + lean)];
+  return {
+    distance: toFront + toBack,
+    px: corner.x - toBack * cos,
+    py: corner.y - toBack * sin,
+    qx: corner.x + toFront * cos,
+    qy: corner.y + toFront * sin,
+  };
 }
 
-function isInCopper(x: number, y: number, sides: readonly Side[]): boolean {
-  let inside = false;
-  for (const { ax, ay, bx, by } of sides) {
-    if (ay > y !== by > y && x < ax + ((y - ay) / (by - ay)) * (bx - ax)) inside = !inside;
+/** Every shortest segment around one corner. */
+function around(corner: Corner, take: (a: Side, b: Side, candidate: Candidate | null) => void): void {
+  for (const { from, to, side } of corner.views) {
+    // The view's borders as leans from the side's normal; a side is seen from less than half a turn.
+    const low = turnBetween(side.into, corner.start + from);
+    const high = low + (to - from);
+    for (const own of [corner.arriving, corner.leaving]) {
+      if (!areNeighbours(own, side)) take(own, side, fromCorner(corner, own, side, low, high));
+    }
+    // The way on beyond the corner must be open too: half a turn on.
+    for (const behind of corner.views) {
+      const begin = Math.max(from, behind.from - Math.PI);
+      const end = Math.min(to, behind.to - Math.PI);
+      if (begin < end && behind.side !== side && !areNeighbours(behind.side, side)) {
+        const past = pastCorner(corner, behind.side, side, low + (begin - from), low + (end - from));
+        take(behind.side, side, past);
+      }
+    }
   }
-  return inside;
 }
 
-/** Sideways play when looking past a corner [nm]: a segment that brushes a corner is not blocked by it. */
-const BRUSH_NM = 0.5;
-
-function isOpen(c: Candidate, sides: readonly Side[], across: 'clearance' | 'copper'): boolean {
-  for (const shift of [BRUSH_NM, -BRUSH_NM]) {
-    if (crosses(c, sides, shift)) continue;
-    const dx = c.qx - c.px;
-    const dy = c.qy - c.py;
-    const x = (c.px + c.qx) / 2 - (dy / c.distance) * shift;
-    const y = (c.py + c.qy) / 2 + (dx / c.distance) * shift;
-    if (isInCopper(x, y, sides) === (across === 'copper')) return true;
-  }
-  return false;
+/** A contour as a ring, and for each of its sides the edge that it belongs to. */
+function ringOf(contour: Contour, firstEdge: number): { readonly ring: PointNm[]; readonly edges: SourceEdge[] } {
+  const corners = cornersOf(contour);
+  const ring: PointNm[] = [];
+  const edges: SourceEdge[] = [];
+  contour.edges.forEach((edge, i) => {
+    const from = corners[i]!;
+    const ends = flattenEdge(from, edge, SEARCH_CHORD_NM);
+    const circle =
+      edge.kind === 'line'
+        ? null
+        : {
+            x: edge.centre.xNm,
+            y: edge.centre.yNm,
+            radius: Math.hypot(from.xNm - edge.centre.xNm, from.yNm - edge.centre.yNm),
+          };
+    ring.push(from, ...ends.slice(0, -1));
+    edges.push(...ends.map(() => ({ number: firstEdge + i, circle })));
+  });
+  return { ring, edges };
 }
-
-/** Points of an edge from which a shortest segment may start: its ends, and the feet of the corners that look at it. */
-function startsOf(side: Side, sides: readonly Side[]): number[] {
-  const starts = [0, side.length];
-  for (const { ax, ay } of sides) {
-    const foot = (ax - side.ax) * side.ux + (ay - side.ay) * side.uy;
-    if (foot > 0 && foot < side.length) starts.push(foot);
-  }
-  return starts;
-}
-
-/** Edges at most this many are searched from feet as well as from ends; more come only from flattened arcs, whose
- *  chords are so short that their ends serve. */
-const FEW_SIDES = 80;
 
 /** All pairs of facing edges nearer than a distance, the nearest place of each, nearest first; and the nearest of all
- *  even when it is farther.
+ *  even when it is farther. Edges that share a corner do not face: a sharp corner is no gap.
  *  @param across  'clearance' gives gaps, 'copper' gives widths
- *  Exact for straight edges, but where something stands between two edges and no corner's foot sees past it. */
+ *  Exact for straight edges, and for arcs whose nearest place lies within them; at an arc's end within
+ *  SEARCH_CHORD_NM. */
 export function findFacing(
   shape: Shape,
-  across: 'clearance' | 'copper',
+  across: Medium,
   belowNm: number,
 ): { readonly nearest: Facing | null; readonly below: readonly Facing[] } {
-  const rings = shape.flatMap((region) => [region.outer, ...region.holes].map((c) => flatten(c, FACING_CHORD_NM)));
-  const sides = sidesOf(rings);
-  const sign = across === 'clearance' ? 1 : -1;
-  const candidates: Candidate[] = [];
-  sides.forEach((own, i) => {
-    const starts = sides.length <= FEW_SIDES ? startsOf(own, sides) : [0, own.length];
-    sides.forEach((other, j) => {
-      if (i === j || areNeighbours(own, other)) return;
-      for (const start of starts) {
-        const px = own.ax + start * own.ux;
-        const py = own.ay + start * own.uy;
-        const found = nearestFacing(px, py, own, other, sign);
-        if (found !== null && found.distance > DISTANCE_SLACK_NM) {
-          const pair = Math.min(i, j) * sides.length + Math.max(i, j);
-          candidates.push({ px, py, qx: found.qx, qy: found.qy, distance: found.distance, pair });
-        }
-      }
+  let edgeCount = 0;
+  const outlines = shape
+    .flatMap((region) => [region.outer, ...region.holes])
+    .map((contour) => {
+      const outline = ringOf(contour, edgeCount);
+      edgeCount += contour.edges.length;
+      return outline;
     });
-  });
-  candidates.sort((a, b) => a.distance - b.distance || a.pair - b.pair || a.px - b.px || a.py - b.py);
-  let nearest: Facing | null = null;
-  const below: Facing[] = [];
-  const seen = new Set<number>();
-  for (const candidate of candidates) {
-    const isBelow = candidate.distance < belowNm - DISTANCE_SLACK_NM;
-    if (nearest !== null && !isBelow) break;
-    if (seen.has(candidate.pair) || !isOpen(candidate, sides, across)) continue;
-    seen.add(candidate.pair);
-    const facing = facingOf(candidate);
-    nearest ??= facing;
-    if (isBelow) below.push(facing);
+  const sides = sidesOf(
+    outlines.map(({ ring }) => ring),
+    outlines.map(({ edges }) => edges),
+    across,
+  );
+  const nearestOfPair = new Map<number, Candidate & { readonly a: Side; readonly b: Side }>();
+  const take = (a: Side, b: Side, candidate: Candidate | null): void => {
+    if (candidate === null || !(candidate.distance > DISTANCE_SLACK_NM)) return;
+    const pair = Math.min(a.edge.number, b.edge.number) * edgeCount + Math.max(a.edge.number, b.edge.number);
+    const known = nearestOfPair.get(pair);
+    if (known === undefined || candidate.distance < known.distance) nearestOfPair.set(pair, { ...candidate, a, b });
+  };
+  let first = 0;
+  for (const { ring } of outlines) {
+    for (let i = 0; i < ring.length; i++) {
+      const arriving = sides[first + ((i + ring.length - 1) % ring.length)]!;
+      around(lookAround(arriving, sides[first + i]!, sides, across), take);
+    }
+    first += ring.length;
   }
-  return { nearest, below };
+  const facings = [...nearestOfPair]
+    .map(([pair, found]) => ({ pair, found: onArcs(found, found.a, found.b) }))
+    .sort((a, b) => a.found.distance - b.found.distance || a.pair - b.pair)
+    .map(({ found }) => facingOf(found));
+  return {
+    nearest: facings[0] ?? null,
+    below: facings.filter(({ distanceNm }) => distanceNm < belowNm - DISTANCE_SLACK_NM),
+  };
 }
 
 function facingOf(c: Candidate): Facing {
-  const whole = (x: number, y: number): PointNm => ({ xNm: Math.round(x), yNm: Math.round(y) });
+  const whole = (x: number, y: number): PointNm => point(Math.round(x), Math.round(y));
   return { distanceNm: c.distance, from: whole(c.px, c.py), to: whole(c.qx, c.qy) };
 }

@@ -27,15 +27,20 @@ export function millimetres(nm: number): string {
   return `${nm / 1e6} mm`;
 }
 
+/** The place with the smallest measure, the first of equals; null for none. */
+export function tightest(places: readonly Place[]): Place | null {
+  return places.reduce<Place | null>(
+    (best, place) => (best === null || place.measuredNm < best.measuredNm ? place : best),
+    null,
+  );
+}
+
 /** Places of several layers as one finding, the tightest first. */
 export function gather(
   limitNm: number,
   layer: LayerName,
-  parts: readonly { nearest: Place | null; below: readonly Place[] }[],
+  parts: readonly { readonly nearest: Place | null; readonly below: readonly Place[] }[],
 ): Finding {
-  const nearest = parts
-    .map((part) => part.nearest)
-    .filter((place): place is Place => place !== null)
-    .reduce<Place | null>((best, place) => (best === null || place.measuredNm < best.measuredNm ? place : best), null);
+  const nearest = tightest(parts.map((part) => part.nearest).filter((place): place is Place => place !== null));
   return { layer, limitNm, nearest, below: parts.flatMap((part) => part.below) };
 }

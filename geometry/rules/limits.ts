@@ -16,11 +16,23 @@ export interface Limits {
   /** Null where the shop lays no mask or prints no legend. */
   readonly maskWeb: number | null;
   readonly legendLine: number | null;
+  /** How far one print may lie astray from another. */
+  readonly registration: number;
+  /** Smallest plated hole; null where the shop plates none. */
+  readonly platedHole: number | null;
+  /** Smallest hole plated through a board of this thickness. */
+  readonly platedThrough: number;
+  readonly unplatedHole: number;
+  readonly holeToCopper: number;
+  /** Copper around a soldered hole, plated and not. */
+  readonly ring: number;
+  readonly unplatedRing: number;
 }
 
 /** Limits for a copper weight.
+ *  @param boardThicknessM  with its coppers, for the depth of plated holes
  *  Throws: EngineError "copper.tooHeavy" where the shop etches none so thick. */
-export function limitsOf(fabricator: Fabricator, copperBaseM: number): Limits {
+export function limitsOf(fabricator: Fabricator, copperBaseM: number, boardThicknessM: number): Limits {
   const row = copperRow(fabricator, copperBaseM);
   if (row === undefined) {
     const heaviest = fabricator.copperRows.at(-1)?.baseM ?? 0;
@@ -42,5 +54,12 @@ export function limitsOf(fabricator: Fabricator, copperBaseM: number): Limits {
     boardLength: toNm(fabricator.boardMaxLengthM),
     maskWeb: fabricator.mask === null ? null : toNm(fabricator.mask.webM),
     legendLine: fabricator.legend === null ? null : toNm(fabricator.legend.lineM),
+    registration: toNm(fabricator.registrationM),
+    platedHole: fabricator.plated === null ? null : toNm(fabricator.plated.minimumHoleM),
+    platedThrough: fabricator.plated === null ? 0 : toNm(boardThicknessM / fabricator.plated.aspectRatio),
+    unplatedHole: toNm(fabricator.minimumUnplatedHoleM),
+    holeToCopper: toNm(fabricator.unplatedHoleToCopperM),
+    ring: toNm(row.ringM),
+    unplatedRing: toNm(fabricator.unplatedRingM),
   };
 }

@@ -1,9 +1,9 @@
-// Area, extent and inside of contours and shapes.
+// Area, extent, inside and distance of contours and shapes.
 
-import { arcSweepRad, flatten } from './flatten.ts';
+import { arcSweepRad } from './flatten.ts';
 import { onSegment, turn } from './predicates.ts';
 import { cornersOf } from './primitives.ts';
-import type { Contour, PointNm, Ring, Shape } from './shape.ts';
+import { type Contour, type Edge, type PointNm, point, type Ring, type Shape } from './shape.ts';
 
 /** Signed area of a contour [nm²]: positive counter-clockwise; arcs exactly, by Green's theorem.
  *  Straight edges: exact to rounding of the last sum (the terms are taken about the start, so they stay small). */
@@ -41,9 +41,6 @@ export interface BoxNm {
   readonly maxY: number;
 }
 
-/** Chord error for extents and inside tests [nm]: no arc here bulges by more between its chords. */
-const EXTENT_CHORD_NM = 10;
-
 /** Smallest upright box around points; null for none. */
 export function boxOf(points: readonly PointNm[]): BoxNm | null {
   if (points.length === 0) return null;
@@ -60,9 +57,35 @@ export function boxOf(points: readonly PointNm[]): BoxNm | null {
   return { minX, minY, maxX, maxY };
 }
 
-/** Smallest upright box around a shape; null for the empty shape. Arcs to within EXTENT_CHORD_NM. */
+/** Where an arc reaches farthest to the right, up, left and down, its ends apart; rounded to whole nanometres. */
+function arcExtremes(from: PointNm, edge: Extract<Edge, { kind: 'arc' }>): PointNm[] {
+  const { centre } = edge;
+  const radius = Math.round(Math.hypot(from.xNm - centre.xNm, from.yNm - centre.yNm));
+  const start = Math.atan2(from.yNm - centre.yNm, from.xNm - centre.xNm);
+  const sweep = arcSweepRad(from, edge);
+  const whole = 2 * Math.PI;
+  return [
+    [1, 0],
+    [0, 1],
+    [-1, 0],
+    [0, -1],
+  ].flatMap(([x, y], quarter) => {
+    const turn = (quarter * Math.PI) / 2 - start;
+    const along = (((sweep > 0 ? turn : -turn) % whole) + whole) % whole;
+    return along < Math.abs(sweep) ? [point(centre.xNm + x! * radius, centre.yNm + y! * radius)] : [];
+  });
+}
+
+/** Smallest upright box around a shape, arcs included; null for the empty shape. */
 export function shapeBox(shape: Shape): BoxNm | null {
-  return boxOf(shape.flatMap((region) => flatten(region.outer, EXTENT_CHORD_NM)));
+  return boxOf(
+    shape.flatMap(({ outer }) => {
+      const corners = cornersOf(outer);
+      return outer.edges.flatMap((edge, i) =>
+        edge.kind === 'line' ? [edge.to] : [edge.to, ...arcExtremes(corners[i]!, edge)],
+      );
+    }),
+  );
 }
 
 /** Where a point lies against a ring of straight edges. Exact, for either orientation. */
@@ -78,4 +101,44 @@ export function locate(p: PointNm, ring: Ring): 'inside' | 'outside' | 'on' {
     }
   }
   return inside ? 'inside' : 'outside';
+}
+
+/** A distance with the two points between which it was measured; they are not rounded. */
+export interface DistanceNm {
+  readonly distanceNm: number;
+  readonly from: PointNm;
+  readonly to: PointNm;
+}
+
+export function distanceBetween(from: PointNm, to: PointNm): DistanceNm {
+  return { distanceNm: Math.hypot(from.xNm - to.xNm, from.yNm - to.yNm), from, to };
+}
+
+export function nearerOf(a: DistanceNm, b: DistanceNm): DistanceNm {
+  return b.distanceNm < a.distanceNm ? b : a;
+}
+
+/** The point of the segment a–b nearest to p, not rounded; a segment of no length is its end. */
+export function nearestOnSegment(p: PointNm, a: PointNm, b: PointNm): PointNm {
+  const dx = b.xNm - a.xNm;
+  const dy = b.yNm - a.yNm;
+  const length2 = dx * dx + dy * dy;
+  if (length2 === 0) return a;
+  const t = Math.min(1, Math.max(0, ((p.xNm - a.xNm) * dx + (p.yNm - a.yNm) * dy) / length2));
+  return point(a.xNm + t * dx, a.yNm + t * dy);
+}
+
+/** Distance of the segments a–b and c–d, from the first to the second. Exact for axis-parallel ones; 0 where they
+ *  cross, with a as both points. */
+export function segmentDistance(a: PointNm, b: PointNm, c: PointNm, d: PointNm): DistanceNm {
+  const ends = [
+    distanceBetween(a, nearestOnSegment(a, c, d)),
+    distanceBetween(b, nearestOnSegment(b, c, d)),
+    distanceBetween(nearestOnSegment(c, a, b), c),
+    distanceBetween(nearestOnSegment(d, a, b), d),
+  ].reduce(nearerOf);
+  const side = (p: PointNm, q: PointNm, r: PointNm): number =>
+    (q.xNm - p.xNm) * (r.yNm - p.yNm) - (q.yNm - p.yNm) * (r.xNm - p.xNm);
+  const crosses = side(a, b, c) * side(a, b, d) < 0 && side(c, d, a) * side(c, d, b) < 0;
+  return crosses ? { distanceNm: 0, from: a, to: a } : ends;
 }

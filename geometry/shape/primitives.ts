@@ -16,6 +16,19 @@ export function rectangle(x0Nm: number, y0Nm: number, x1Nm: number, y1Nm: number
   };
 }
 
+/** A circle as two half circles, counter-clockwise; centre and radius are whole. */
+export function disc(centre: PointNm, radiusNm: number): Contour {
+  const left = point(centre.xNm - radiusNm, centre.yNm);
+  const right = point(centre.xNm + radiusNm, centre.yNm);
+  return {
+    start: right,
+    edges: [
+      { kind: 'arc', to: left, centre, clockwise: false },
+      { kind: 'arc', to: right, centre, clockwise: false },
+    ],
+  };
+}
+
 /** The corners of a contour: the ends of its edges, arcs reduced to their ends. */
 export function cornersOf(contour: Contour): readonly PointNm[] {
   return [contour.start, ...contour.edges.slice(0, -1).map(({ to }) => to)];

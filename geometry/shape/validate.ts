@@ -1,8 +1,8 @@
 // The one validator of geometric truths, for every shape that is ever built.
 
 import { arcSweepRad, flatten } from './flatten.ts';
-import { contourAreaNm2, locate } from './measure.ts';
-import { samePoint, segmentsMeet } from './predicates.ts';
+import { contourAreaNm2, distanceBetween, locate, nearestOnSegment } from './measure.ts';
+import { dotSign, samePoint, segmentsMeet, turn } from './predicates.ts';
 import { cornersOf } from './primitives.ts';
 import { ARC_RADIUS_TOLERANCE_NM, type Contour, type PointNm, type Ring, type Shape } from './shape.ts';
 
@@ -78,17 +78,21 @@ function selfMeeting(ring: Ring): PointNm | null {
       const d = ring[(j + 1) % n]!;
       if (Math.max(c.xNm, d.xNm) < minX || Math.min(c.xNm, d.xNm) > maxX) continue;
       if (j === i + 1) {
-        // The next side may not run back over this one.
-        if (n > 3 && segmentsMeet(a, b, d, d)) return d;
+        if (runsBack(a, b, d)) return b;
       } else if (i === 0 && j === n - 1) {
-        if (n > 3 && segmentsMeet(c, d, b, b)) return b;
+        if (runsBack(c, a, b)) return a;
       } else if (segmentsMeet(a, b, c, d)) return c;
     }
   }
   return null;
 }
 
-/** Whether two rings have a point of their sides in common. */
+/** Whether the way from b to c runs back over the one from a to b. */
+function runsBack(a: PointNm, b: PointNm, c: PointNm): boolean {
+  return turn(a, b, c) === 0 && dotSign(b.xNm - a.xNm, b.yNm - a.yNm, c.xNm - b.xNm, c.yNm - b.yNm) < 0;
+}
+
+/** A point where the sides of two rings meet, or null. */
 function ringsMeet(a: Ring, b: Ring): PointNm | null {
   for (let i = 0; i < a.length; i++) {
     for (let j = 0; j < b.length; j++) {
@@ -109,47 +113,58 @@ export function validateShape(shape: Shape, where: string): readonly GeometryFau
     });
   });
   if (faults.length > 0) return faults;
-  const outers = shape.map((region) => flatten(region.outer, CHORD_NM));
-  shape.forEach((region, i) => {
-    const holes = region.holes.map((hole) => flatten(hole, CHORD_NM));
+  const rings = shape.map(({ outer, holes }) => ({
+    outer: flatten(outer, CHORD_NM),
+    holes: holes.map((hole) => flatten(hole, CHORD_NM)),
+  }));
+  rings.forEach(({ outer, holes }, i) => {
     holes.forEach((hole, j) => {
-      const others = [outers[i]!, ...holes.slice(0, j)];
-      const meeting = others.map((other) => ringsMeet(hole, other)).find((at) => at !== null);
-      if (meeting || locate(hole[0]!, outers[i]!) !== 'inside') {
+      const apart = holes.slice(0, j).every((other) => ringsMeet(hole, other) === null && !areNested(hole, other));
+      if (!apart || ringsMeet(hole, outer) !== null || !isWithin(hole, outer)) {
         faults.push({ code: 'holeOutside', where: `${where}[${i}].holes[${j}]`, at: hole[0]! });
       }
     });
-    for (let j = 0; j < i; j++) {
-      const meeting = ringsMeet(outers[i]!, outers[j]!);
-      const nested =
-        locate(outers[i]![0]!, outers[j]!) === 'inside' &&
-        !shape[j]!.holes.some((hole) => locate(outers[i]![0]!, flatten(hole, CHORD_NM)) === 'inside');
-      if (meeting || nested) faults.push({ code: 'regionsMeet', where: `${where}[${i}]`, at: outers[i]![0]! });
+    for (const other of rings.slice(0, i)) {
+      const meeting = ringsMeet(outer, other.outer);
+      // One inside the other is apart from it only inside one of its holes.
+      const apart =
+        !areNested(outer, other.outer) ||
+        other.holes.some((hole) => isWithin(outer, hole)) ||
+        holes.some((hole) => isWithin(other.outer, hole));
+      if (meeting !== null || !apart) faults.push({ code: 'regionsMeet', where: `${where}[${i}]`, at: outer[0]! });
     }
   });
   return faults;
 }
 
-/** Faults of a shape that must lie within an outline (touching it is allowed). */
+/** Whether the inner of two rings that do not meet lies in the other. */
+function isWithin(inner: Ring, outer: Ring): boolean {
+  return locate(inner[0]!, outer) === 'inside';
+}
+
+function areNested(a: Ring, b: Ring): boolean {
+  return isWithin(a, b) || isWithin(b, a);
+}
+
+/** Faults of a shape that must lie within an outline (touching it is allowed): no corner of the shape outside, none of
+ *  the outline inside. */
 export function validateWithin(shape: Shape, outline: Contour, where: string): readonly GeometryFault[] {
   const border = flatten(outline, CHORD_NM);
   const faults: GeometryFault[] = [];
   for (const region of shape) {
-    const outside = flatten(region.outer, CHORD_NM).find(
-      (p) => locate(p, border) === 'outside' && !nearBorder(p, border),
-    );
+    const ring = flatten(region.outer, CHORD_NM);
+    const outside =
+      ring.find((p) => locate(p, border) === 'outside' && !isNear(p, border)) ??
+      border.find((p) => locate(p, ring) === 'inside' && !isNear(p, ring));
     if (outside !== undefined) faults.push({ code: 'outsideProfile', where, at: outside });
   }
   return faults;
 }
 
-/** Points of a flattened arc may lie a chord error outside the flattened outline. */
-function nearBorder(p: PointNm, border: Ring): boolean {
-  return border.some((a, i) => {
-    const b = border[(i + 1) % border.length]!;
-    const dx = b.xNm - a.xNm;
-    const dy = b.yNm - a.yNm;
-    const t = Math.min(1, Math.max(0, ((p.xNm - a.xNm) * dx + (p.yNm - a.yNm) * dy) / (dx * dx + dy * dy)));
-    return Math.hypot(p.xNm - a.xNm - t * dx, p.yNm - a.yNm - t * dy) <= 2 * CHORD_NM;
+/** Points of a flattened arc may lie a chord error beyond another flattened arc. */
+function isNear(p: PointNm, ring: Ring): boolean {
+  return ring.some((a, i) => {
+    const onSide = nearestOnSegment(p, a, ring[(i + 1) % ring.length]!);
+    return distanceBetween(p, onSide).distanceNm <= 2 * CHORD_NM;
   });
 }

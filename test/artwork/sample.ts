@@ -4,7 +4,7 @@ import type { Artwork } from '../../geometry/artwork/artwork.ts';
 import { composeArtwork } from '../../geometry/artwork/compose.ts';
 import type { Brief } from '../../geometry/brief/brief.ts';
 import type { Fabricator } from '../../geometry/fabricator/fabricator.ts';
-import type { PatchDesign } from '../../geometry/patch/design.ts';
+import type { InsetFeed, PatchDesign } from '../../geometry/patch/design.ts';
 
 export const sampleFabricator: Fabricator = {
   name: 'sample-shop',
@@ -56,17 +56,19 @@ export const sampleBrief: Brief = {
   defaults: [],
 };
 
+export const sampleFeed: InsetFeed = {
+  kind: 'inset',
+  lineWidthM: 0.00298,
+  lineWidthInNotchM: 0.00298,
+  insetDepthM: 0.0087,
+  notchGapM: 0.001,
+  lineLengthM: 0.0291,
+};
+
 export const sampleDesign: PatchDesign = {
   kind: 'patch-design',
   radiator: { family: 'rectangular', lengthM: 0.029, widthM: 0.037 },
-  feed: {
-    kind: 'inset',
-    lineWidthM: 0.00298,
-    lineWidthInNotchM: 0.00298,
-    insetDepthM: 0.0087,
-    notchGapM: 0.001,
-    lineLengthM: 0.0291,
-  },
+  feed: sampleFeed,
   board: { widthM: 0.0556, lengthM: 0.0674, cornerRadiusM: 0 },
   prediction: {
     method: 'closed-form',
@@ -111,13 +113,13 @@ export const sampleDesign: PatchDesign = {
 /** The design with some of its dimensions changed. */
 export function designWith(change: {
   readonly radiator?: Partial<PatchDesign['radiator']>;
-  readonly feed?: Partial<PatchDesign['feed']>;
+  readonly feed?: Partial<InsetFeed>;
   readonly board?: Partial<PatchDesign['board']>;
 }): PatchDesign {
   return {
     ...sampleDesign,
     radiator: { ...sampleDesign.radiator, ...change.radiator },
-    feed: { ...sampleDesign.feed, ...change.feed },
+    feed: { ...sampleFeed, ...change.feed },
     board: { ...sampleDesign.board, ...change.board },
   };
 }

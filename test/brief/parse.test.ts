@@ -155,7 +155,7 @@ describe('faults of a brief', () => {
     ['match.reference', '0 ohm', 'match.reference: "0 ohm" is out of range; allowed is 1 ohm to 1000 ohm'],
     ['polarization', 'circular', 'polarization: "circular" is not known here; allowed is "linear"'],
     ['radiator.family', 'disc', 'radiator.family: "disc" is not known here; allowed is "rectangular"'],
-    ['feed.kind', 'probe', 'feed.kind: "probe" is not known here; allowed is "inset"'],
+    ['feed.kind', 'slot', 'feed.kind: "slot" is not known here; allowed is "inset" or "quarter-wave" or "probe"'],
     ['format', 'etchwave-brief/9', 'format: "etchwave-brief/9" is not known here; allowed is "etchwave-brief/1"'],
     ['laminate.permittivity', 0.9, 'laminate.permittivity: 0.9 is out of range; allowed is 1 to 30'],
     ['laminate.permittivity', 31, 'laminate.permittivity: 31 is out of range; allowed is 1 to 30'],

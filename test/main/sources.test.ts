@@ -8,7 +8,7 @@ import { folderWith } from './process.ts';
 
 function tree(): string {
   const root = folderWith({ 'package.json': '{}', 'package-lock.json': '{}', 'vite.config.ts': '' });
-  for (const folder of ['geometry/line', 'main', 'test/speed', 'dist'])
+  for (const folder of ['geometry/line', 'main', 'test/speed', 'test/published', 'dist'])
     mkdirSync(join(root, folder), { recursive: true });
   for (const file of ['geometry/line/a.ts', 'main/cli.ts', 'test/speed/bench.ts']) writeFileSync(join(root, file), 'x');
   writeFileSync(stampFile(root), digestOfSources(root));

@@ -18,6 +18,7 @@ describe('sizePatch', () => {
     expect(Math.abs(prediction.resonanceHz / centre - 1)).toBeLessThan(2e-4);
     expect(prediction.resonanceKind).toBe('bestMatch');
     expect(prediction.returnLossAtCentreDb!).toBeGreaterThan(30);
+    if (feed.kind !== 'inset') throw new Error('an inset was asked for');
     expect(feed.insetDepthM / radiator.lengthM).toBeGreaterThan(0.1);
     expect(prediction.resonanceHz).toBeGreaterThan(prediction.bareResonanceHz * 1.01);
     expect(prediction.resonanceLowHz).toBeLessThan(prediction.resonanceHz);
@@ -26,6 +27,7 @@ describe('sizePatch', () => {
 
   it('sizes in whole micrometres', () => {
     const { radiator, feed, board } = sizePatch(brief());
+    if (feed.kind !== 'inset') throw new Error('an inset was asked for');
     for (const m of [
       radiator.lengthM,
       radiator.widthM,

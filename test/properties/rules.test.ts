@@ -56,19 +56,19 @@ function hasSharpCorner(polygon: readonly Xy[]): boolean {
 }
 
 /** A star-shaped polygon with slanted sides and no sharp corner. */
-function star(random: () => number, cx: number, cy: number): Xy[] {
+function star(random: () => number, cx: number, cy: number, size = 1): Xy[] {
   for (;;) {
-    const points = anyStar(random, cx, cy);
+    const points = anyStar(random, cx, cy, size);
     if (!hasSharpCorner(points)) return points;
   }
 }
 
-function anyStar(random: () => number, cx: number, cy: number): Xy[] {
+function anyStar(random: () => number, cx: number, cy: number, size: number): Xy[] {
   const n = 5 + Math.floor(random() * 5);
   const points: Xy[] = [];
   for (let i = 0; i < n; i++) {
     const angle = (2 * Math.PI * (i + 0.6 * random())) / n;
-    const r = 700 + random() * 2200;
+    const r = size * (700 + random() * 2200);
     points.push([Math.round(cx + r * Math.cos(angle)), Math.round(cy + r * Math.sin(angle))]);
   }
   return points;
@@ -207,5 +207,12 @@ describe(`gap and width, seed ${SEED}`, () => {
   it('a star beside a comb, two stars side by side', () => {
     for (let i = 0; i < 8; i++) compare([star(random, 0, 0), comb(random, 3200, -1500)], `pair ${i}`);
     for (let i = 0; i < 8; i++) compare([star(random, 0, 0), star(random, 6000, 300)], `stars ${i}`);
+  });
+
+  it('a small star between two large ones: views past its corners', () => {
+    for (let i = 0; i < 12; i++) {
+      const between = star(random, 3500, (random() - 0.5) * 4000, 0.18);
+      compare([star(random, 0, 0), star(random, 7000, 300), between], `three ${i}`);
+    }
   });
 });

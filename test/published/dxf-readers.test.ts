@@ -108,8 +108,20 @@ describe('holes, circles and clockwise contours', () => {
       ...artworkOf(soilSensor),
       copperBottom: islands,
       holes: [
-        { centre: { xNm: 5_000_000, yNm: 6_000_000 }, finishedDiameterNm: 1_000_000, plated: true },
-        { centre: { xNm: 9_000_000, yNm: 6_000_000 }, finishedDiameterNm: 3_200_000, plated: false },
+        {
+          centre: { xNm: 5_000_000, yNm: 6_000_000 },
+          finishedDiameterNm: 1_000_000,
+          plated: true,
+          use: 'pin',
+          label: 'a',
+        } as const,
+        {
+          centre: { xNm: 9_000_000, yNm: 6_000_000 },
+          finishedDiameterNm: 3_200_000,
+          plated: false,
+          use: 'mounting',
+          label: 'b',
+        } as const,
       ],
     };
     const { polylines, circles } = await read(inputOf(soilSensor, artwork));

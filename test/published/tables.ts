@@ -15,7 +15,8 @@ import { bestMatch, loadedPole, peakResistance, returnLossDb } from '../../geome
 import { qualitySplit } from '../../geometry/patch/quality.ts';
 
 function fixture(name: string): string {
-  return readFileSync(new URL(`../../fixtures/published/${name}`, import.meta.url), 'utf8');
+  // Tests and the built report both run from the repository's root.
+  return readFileSync(`${process.cwd()}/fixtures/published/${name}`, 'utf8');
 }
 
 /** Rows of a CSV file as records of text; quoted fields may hold commas. */

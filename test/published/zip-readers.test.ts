@@ -71,6 +71,7 @@ describe('a package', () => {
       `${slug}-mask-bottom.gbr`,
       `${slug}-mask-top.gbr`,
       `${slug}-profile.gbr`,
+      `${slug}.gbrjob`,
     ];
     expect(entries.map(({ name }) => name)).toEqual(promised);
   });

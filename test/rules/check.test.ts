@@ -1,12 +1,13 @@
 // The rule check on boards and on small shapes whose answer is plain.
 
 import { describe, expect, it } from 'vitest';
+import type { Artwork } from '../../geometry/artwork/artwork.ts';
 import { EngineError } from '../../geometry/errors.ts';
 import { checkRules } from '../../geometry/rules/check.ts';
 import { findFacing } from '../../geometry/rules/facing.ts';
 import type { RuleReport } from '../../geometry/rules/violation.ts';
-import { contourOf, rectangle } from '../../geometry/shape/primitives.ts';
-import { point, type Shape } from '../../geometry/shape/shape.ts';
+import { contourOf, disc, rectangle, reverse } from '../../geometry/shape/primitives.ts';
+import { type PointNm, point, type Shape } from '../../geometry/shape/shape.ts';
 import { designWith, sampleArtwork, sampleBrief, sampleDesign, sampleFabricator } from '../artwork/sample.ts';
 
 const MM = 1_000_000;
@@ -23,7 +24,10 @@ describe('checkRules', () => {
   it('a sound board: every rule with its limit, the smallest found and the margin', () => {
     const report = check();
     expect(report.violations).toEqual([]);
-    expect(report.rules.map((r) => [r.rule, r.limitNm, r.smallestNm, r.marginNm])).toEqual([
+    // There are no holes: their rules have no subject.
+    const [onHoles, others] = [true, false].map((holes) => report.rules.filter((r) => (r.layer === 'drill') === holes));
+    expect(onHoles!.map(({ smallestNm }) => smallestNm)).toEqual(onHoles!.map(() => null));
+    expect(others!.map((r) => [r.rule, r.limitNm, r.smallestNm, r.marginNm])).toEqual([
       ['gap', 200_000, 1_000_000, 800_000],
       ['width', 200_000, 2_980_000, 2_780_000],
       ['corner', 200_000, 282_843, 82_843],
@@ -31,6 +35,14 @@ describe('checkRules', () => {
       ['board-size', 300_000_000, 55_600_000, 244_400_000],
       ['mask-web', 100_000, null, null],
       ['legend-width', 150_000, 150_000, 0],
+      // Far away, whatever the letters are; tests of its own below.
+      ['legend-clearance', 150_000, expect.any(Number), expect.any(Number)],
+      ['plated-hole', 250_000, null, null],
+      ['plated-depth', 0, null, null],
+      ['unplated-hole', 350_000, null, null],
+      ['ring', 0, null, null],
+      ['hole-to-copper', 250_000, null, null],
+      ['hole-to-edge', 250_000, null, null],
     ]);
     expect(report.rules.every(({ holds }) => holds)).toBe(true);
     expect(report.remarks.join(' ')).toContain('J1');
@@ -90,6 +102,43 @@ describe('checkRules', () => {
     expect(rule(report, 'mask-web').smallestNm).toBeNull();
     expect(rule(report, 'legend-width').smallestNm).toBeNull();
     expect(report.remarks.join(' ')).toContain('no legend');
+  });
+
+  it('legend ink against mask openings and copper, from the edge of the pen', () => {
+    const artwork = sampleArtwork(sampleDesign);
+    const opening = artwork.dimensions.find(({ name }) => name === 'lineWidth')!.from.xNm - 200_000;
+    const withInk = (points: readonly PointNm[], change: Partial<Artwork> = {}): RuleReport =>
+      checkRules({
+        artwork: { ...artwork, legendTop: [{ points, widthNm: 150_000 }], ...change },
+        fabricator: sampleFabricator,
+        copperBaseM: 35e-6,
+      });
+    const upright = (fromOpening: number) => [
+      point(opening - fromOpening, 5 * MM),
+      point(opening - fromOpening, 6 * MM),
+    ];
+    // 0.3 mm from pen's middle to the opening leaves 0.225 mm of ink-free board.
+    expect(rule(withInk(upright(300_000)), 'legend-clearance').smallestNm).toBe(225_000);
+    expect(withInk(upright(225_000)).violations).toEqual([]);
+    expect(withInk(upright(224_999)).violations.map((v) => [v.rule, v.measuredNm])).toEqual([
+      ['legend-clearance', 149_999],
+    ]);
+    // Inside the opening, and across its border.
+    expect(rule(withInk(upright(-MM)), 'legend-clearance').smallestNm).toBe(0);
+    const across = [point(opening - MM, 5 * MM), point(opening + 100_000, 5.5 * MM)];
+    expect(rule(withInk(across), 'legend-clearance').smallestNm).toBe(0);
+    // Without a mask only the copper counts: the same ink is 0.2 mm farther off.
+    const bare = { hasSolderMask: false, maskTop: [{ outer: artwork.board.outline, holes: [] }] };
+    expect(rule(withInk(upright(300_000), bare), 'legend-clearance').smallestNm).toBe(425_000);
+  });
+
+  it('names the notch and the line in its sentences', () => {
+    const [first] = check(designWith({ feed: { notchGapM: 0.15e-3 } })).violations;
+    expect(first!.message).toBe(
+      'The notch gap is drawn at 0.15 mm; sample-shop etches no space below 0.2 mm in 35 µm copper, and would bridge it or send the board back.',
+    );
+    const thin = designWith({ feed: { lineWidthM: 0.18e-3, lineWidthInNotchM: 0.18e-3 } });
+    expect(check(thin).violations[0]!.message).toMatch(/line width.* is drawn at 0\.18 mm/);
   });
 
   it('copper heavier than any row is refused by name', () => {
@@ -156,6 +205,82 @@ describe('facing', () => {
     expect(nearest!.distanceNm).toBe(MM);
     expect(nearest!.from.xNm).toBeGreaterThanOrEqual(200_000);
     expect(nearest!.from.xNm).toBeLessThanOrEqual(9_800_000);
+  });
+
+  it('the sides of a sharp corner do not face: that corner is a rule of its own', () => {
+    const triangle: Shape = [
+      { outer: contourOf([point(0, 0), point(10 * MM, -2 * MM), point(10 * MM, 2 * MM)]), holes: [] },
+    ];
+    expect(findFacing(triangle, 'copper', 0).nearest).toBeNull();
+    const equilateral: Shape = [
+      { outer: contourOf([point(0, 0), point(10 * MM, 0), point(5 * MM, 8_660_254)]), holes: [] },
+    ];
+    expect(findFacing(equilateral, 'copper', 0).nearest).toBeNull();
+  });
+
+  it('past a tip between slanted bars: the lean that shares both normals, not either foot', () => {
+    // Bars open to the right at a slope of 1/4 on either side of the x axis; a needle on the axis bars the way up to its
+    // tip of 90° at x = 2 mm. By symmetry the shortest way past is upright there: 2 · (1 + 2/4) mm.
+    const um = (points: readonly (readonly [number, number])[]): Shape[number] => ({
+      outer: contourOf(points.map(([x, y]) => point(x * 1000, y * 1000))),
+      holes: [],
+    });
+    const shape = [
+      um([
+        [0, 1000],
+        [8000, 3000],
+        [8000, 5000],
+        [0, 5000],
+      ]),
+      um([
+        [0, -1000],
+        [0, -5000],
+        [8000, -5000],
+        [8000, -3000],
+      ]),
+      um([
+        [-1000, -100],
+        [1900, -100],
+        [2000, 0],
+        [1900, 100],
+        [-1000, 100],
+      ]),
+    ];
+    // Behind the bars, and seen from the tip nearly upright: they only break up the directions in which it looks.
+    for (const y of [-8000, 7900]) {
+      for (const x of [1700, 2200])
+        shape.push(
+          um([
+            [x, y],
+            [x + 100, y],
+            [x + 100, y + 100],
+            [x, y + 100],
+          ]),
+        );
+    }
+    const betweenBars = findFacing(shape, 'clearance', 20 * MM).below.find(
+      ({ from, to }) => Math.min(from.yNm, to.yNm) < -0.5 * MM && Math.max(from.yNm, to.yNm) > 0.5 * MM,
+    )!;
+    expect(betweenBars.distanceNm).toBeCloseTo(3 * MM, 3);
+    expect([betweenBars.from.xNm, betweenBars.to.xNm]).toEqual([2 * MM, 2 * MM]);
+  });
+
+  it('arcs are measured as arcs: a disc by a bar, a land in its clearance, a ring of copper', () => {
+    const gap = (shape: Shape) => findFacing(shape, 'clearance', 0).nearest!.distanceNm;
+    const width = (shape: Shape) => findFacing(shape, 'copper', 0).nearest!.distanceNm;
+    const round = (x: number, y: number, radius: number) => disc(point(x, y), radius);
+    const bar = rectangle(-5 * MM, -MM, 5 * MM, 0);
+    expect(gap([bar, { outer: round(0.3 * MM, 2.15 * MM, 2 * MM), holes: [] }])).toBeCloseTo(150_000, 2);
+    const [land, clearance] = [round(7_123_457, 3 * MM, 600_000), round(7_123_457, 3 * MM, 800_000)];
+    const plate = { ...rectangle(0, 0, 20 * MM, 20 * MM), holes: [reverse(clearance)] };
+    expect(gap([plate, { outer: land, holes: [] }])).toBeCloseTo(200_000, 2);
+    expect(width([{ outer: clearance, holes: [reverse(land)] }])).toBeCloseTo(200_000, 2);
+    // Two discs side by side on a slant: distance of centres 5 mm less two radii.
+    const discs: Shape = [
+      { outer: round(0, 0, MM), holes: [] },
+      { outer: round(3 * MM, 4 * MM, 2 * MM), holes: [] },
+    ];
+    expect(gap(discs)).toBeCloseTo(2 * MM, 1);
   });
 
   it('a hole has a gap across it and copper around it', () => {

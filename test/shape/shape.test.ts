@@ -2,13 +2,14 @@
 
 import ClipperLib from 'clipper-lib';
 import { describe, expect, it } from 'vitest';
-import { cleanRing, difference, intersection, splitAtTouches, union } from '../../geometry/shape/boolean.ts';
+import { difference, intersection, union } from '../../geometry/shape/boolean.ts';
 import { flatten } from '../../geometry/shape/flatten.ts';
 import { areaNm2, contourAreaNm2, locate } from '../../geometry/shape/measure.ts';
 import { crossSign, segmentsMeet, turn } from '../../geometry/shape/predicates.ts';
 import { contourOf, rectangle, reverse } from '../../geometry/shape/primitives.ts';
+import { cleanRing, splitAtTouches } from '../../geometry/shape/rings.ts';
 import { type Contour, point, type Ring, type Shape } from '../../geometry/shape/shape.ts';
-import { validateContour, validateShape } from '../../geometry/shape/validate.ts';
+import { validateContour, validateShape, validateWithin } from '../../geometry/shape/validate.ts';
 
 const MM = 1_000_000;
 
@@ -74,6 +75,16 @@ describe('booleans', () => {
     const withIsland = union(frame, [rectangle(4 * MM, 4 * MM, 6 * MM, 6 * MM)]);
     expect(withIsland.map(({ holes }) => holes.length).sort()).toEqual([0, 1]);
     expect(areaNm2(withIsland)).toBe((100 - 36 + 4) * MM * MM);
+  });
+
+  it('islands in holes of islands keep their own holes', () => {
+    const square = (inset: number): Shape => [rectangle(inset * MM, inset * MM, (20 - inset) * MM, (20 - inset) * MM)];
+    const frame = difference(square(0), square(2));
+    const inner = difference(square(4), square(6));
+    const both = union(frame, inner, square(8));
+    expect(both.map(({ holes }) => holes.length)).toEqual([1, 1, 0]);
+    expect(validateShape(both, 'both')).toEqual([]);
+    expect(areaNm2(both) / MM / MM).toBe(400 - 256 + 144 - 64 + 16);
   });
 
   it('a spike that runs back on itself ends, and leaves nothing', () => {
@@ -163,6 +174,11 @@ describe('validator', () => {
       'meetsItself',
       contourOf([point(0, 0), point(5 * MM, 0), point(5 * MM, 5 * MM), point(2 * MM, 0), point(0, 5 * MM)]),
     ],
+    ['meetsItself', contourOf([point(0, 0), point(5 * MM, 0), point(2 * MM, 0)])],
+    [
+      'meetsItself',
+      contourOf([point(0, 0), point(5 * MM, 0), point(5 * MM, 9 * MM), point(5 * MM, 5 * MM), point(0, 5 * MM)]),
+    ],
     ['orientation', reverse(sound)],
     ['notClosed', { ...sound, edges: sound.edges.slice(0, 3) }],
     ['fewEdges', contourOf([point(0, 0), point(5 * MM, 0)])],
@@ -194,5 +210,34 @@ describe('validator', () => {
     expect(
       validateShape([{ outer: sound, holes: [] }, rectangle(MM, MM, 2 * MM, 2 * MM)], 's').map(({ code }) => code),
     ).toEqual(['regionsMeet']);
+  });
+
+  it('finds regions that lie in one another, in either order, and lets islands in holes be', () => {
+    const inner = rectangle(MM, MM, 2 * MM, 2 * MM);
+    const around = { outer: sound, holes: [] };
+    const codes = (shape: Shape) => validateShape(shape, 's').map(({ code }) => code);
+    expect(codes([inner, around])).toEqual(['regionsMeet']);
+    expect(codes([around, inner])).toEqual(['regionsMeet']);
+    const hole = reverse(rectangle(MM / 2, MM / 2, 3 * MM, 3 * MM).outer);
+    expect(codes([inner, { outer: sound, holes: [hole] }])).toEqual([]);
+    expect(codes([{ outer: sound, holes: [hole] }, inner])).toEqual([]);
+    expect(codes([{ outer: sound, holes: [hole, reverse(inner.outer)] }])).toEqual(['holeOutside']);
+  });
+
+  it('finds what leaves an outline, by a corner or across a bay', () => {
+    const bay = contourOf([
+      point(0, 0),
+      point(9 * MM, 0),
+      point(9 * MM, 9 * MM),
+      point(5 * MM, 9 * MM),
+      point(4.5 * MM, 2 * MM),
+      point(4 * MM, 9 * MM),
+      point(0, 9 * MM),
+    ]);
+    const codes = (shape: Shape) => validateWithin(shape, bay, 's').map(({ code }) => code);
+    expect(codes([rectangle(0, 0, 9 * MM, MM)])).toEqual([]);
+    expect(codes([rectangle(MM, MM, 10 * MM, 1.5 * MM)])).toEqual(['outsideProfile']);
+    // All four corners are inside; the bay's tip is in it.
+    expect(codes([rectangle(MM, MM, 8 * MM, 3 * MM)])).toEqual(['outsideProfile']);
   });
 });

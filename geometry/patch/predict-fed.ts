@@ -1,19 +1,14 @@
-// What an inset-fed patch does, with its interval, held against the brief.
+// What a fed patch does, with its interval, held against the brief.
 
 import type { Brief } from '../brief/brief.ts';
 import type { Notice } from '../errors.ts';
 import { complex, magnitude } from '../numeric/complex.ts';
 import { bareResonance, type PatchOnSlab } from './bare-resonance.ts';
-import type { BoardSize, InsetFeed, Prediction, RectangularRadiator, Requirement } from './design.ts';
-import {
-  type FedPatch,
-  feedLine,
-  impedanceAtConnector,
-  impedanceAtFrontEdge,
-  impedanceAtInsetEnd,
-} from './inset-feed.ts';
+import type { BoardSize, Feed, Prediction, RectangularRadiator, Requirement } from './design.ts';
+import { modelFeed } from './feed-model.ts';
+import { bandCentreHz, patchOn } from './frame.ts';
 import type { InsetCrossSection } from './inset-network.ts';
-import { feedNotices, feedRange } from './inset-range.ts';
+import { feedNotices } from './inset-range.ts';
 import { resonanceInterval, type Spread } from './interval.ts';
 import {
   bestMatch,
@@ -30,7 +25,7 @@ import { BANDWIDTH_VSWR, modeNotices, modePrediction } from './rectangular.ts';
 /** Frequencies at which the band is searched for its worst return loss, both ends included. */
 const BAND_POINTS = 41;
 
-export interface InsetPrediction {
+export interface FedPrediction {
   readonly prediction: Prediction;
   readonly requirement: readonly Requirement[];
   readonly notices: readonly Notice[];
@@ -78,54 +73,38 @@ function ghz(frequencyHz: number): string {
   return `${(frequencyHz / 1e9).toFixed(4)} GHz`;
 }
 
-/** Predicts an inset-fed patch on its board.
- *  resonance: least reflection in the brief's reference at the connector; bandwidth around it; peak resistance at the
- *  inset's end (see impedanceAtInsetEnd); qualities unloaded, of the bare patch; loaded quality of the pole with feed
- *  and generator.
- *  Valid: inset-range.ts says where the feed's law was verified. */
-export function predictInset(
+/** Predicts a fed patch on its board.
+ *  resonance: least reflection in the brief's reference at the connector; bandwidth around it; input resistance: the
+ *  greatest that the feed sees (see FeedModel); qualities unloaded, of the bare patch; loaded quality of the pole with
+ *  feed and generator.
+ *  Valid: inset-range.ts says where each feed's law was verified. */
+export function predictFed(
   brief: Brief,
   radiator: RectangularRadiator,
-  feed: InsetFeed,
+  feed: Feed,
   board: BoardSize,
-  section: InsetCrossSection,
-): InsetPrediction {
+  section: InsetCrossSection | null,
+): FedPrediction {
   const { laminate, band, match: wish } = brief;
-  const centreHz = (band.lowHz + band.highHz) / 2;
-  const patch: PatchOnSlab = {
-    lengthM: radiator.lengthM,
-    widthM: radiator.widthM,
-    heightM: laminate.thicknessM,
-    permittivity: laminate.permittivity,
-  };
+  const centreHz = bandCentreHz(brief);
+  const patch = patchOn(brief, radiator.lengthM, radiator.widthM);
   const bare = bareResonance(patch);
   const split = qualitySplit(patch, laminate.lossTangent, laminate, bare.resonanceHz);
-  const line = feedLine(laminate, feed.lineWidthM, centreHz);
-  const fed: FedPatch = {
-    patch,
-    mode: { resonanceHz: bare.resonanceHz, quality: split.total },
-    feed,
-    section,
-    line,
-  };
-  const front = impedanceAtFrontEdge(fed);
-  const connector = impedanceAtConnector(fed);
+  const model = modelFeed(brief, radiator, feed, section);
   const reference = wish.referenceOhm;
-  const match = bestMatch(connector, reference, bare.resonanceHz);
-  const peak = peakResistance(impedanceAtInsetEnd(fed), bare.resonanceHz);
-  const pole = loadedPole(front, reference, match.bestMatchHz, split.total / 2);
-  const bandwidthHz = matchedBandwidthHz(connector, reference, match, BANDWIDTH_VSWR);
-  const centreReflection = magnitude(reflection(connector(complex(centreHz)), reference));
-  const worst = worstInBand(connector, reference, band.lowHz, band.highHz);
-  const range = feedRange(patch, feed, bare.resonanceHz);
-  const modelError = Math.hypot(bare.modelError, range.modelError);
+  const match = bestMatch(model.connector, reference, bare.resonanceHz);
+  const peak = peakResistance(model.seen, bare.resonanceHz);
+  const pole = loadedPole(model.atPatch, reference, match.bestMatchHz, split.total / 2);
+  const bandwidthHz = matchedBandwidthHz(model.connector, reference, match, BANDWIDTH_VSWR);
+  const centreReflection = magnitude(reflection(model.connector(complex(centreHz)), reference));
+  const worst = worstInBand(model.connector, reference, band.lowHz, band.highHz);
+  const modelError = Math.hypot(bare.modelError, model.modelError);
   const interval = resonanceInterval(
     match.bestMatchHz,
     spreadsOf(brief, patch, bare.resonanceHz, match.bestMatchHz),
     modelError,
   );
   const mode = modePrediction(split, bare.resonanceHz);
-  const lineLossDb = 20 * Math.LOG10E * line.lossNpPerM * feed.lineLengthM;
   const worstDb = returnLossDb(worst.reflection);
   const prediction: Prediction = {
     ...mode,
@@ -139,7 +118,7 @@ export function predictInset(
     returnLossAtCentreDb: returnLossDb(centreReflection),
     returnLossWorstInBandDb: worstDb,
     qualityLoaded: pole === null ? null : pole.quality,
-    gainRealizedDbi: mode.gainDbi + 10 * Math.log10(1 - centreReflection ** 2) - lineLossDb,
+    gainRealizedDbi: mode.gainDbi + 10 * Math.log10(1 - centreReflection ** 2) - model.lossDb,
   };
   const requirement: Requirement[] = [
     {
@@ -154,9 +133,9 @@ export function predictInset(
     requirement,
     notices: [
       ...bare.notices,
-      ...range.notices,
+      ...model.notices,
       ...modeNotices(patch, match.bestMatchHz, split),
-      ...feedNotices({ brief, patch, feed, board, line, split, bandwidthHz, centreHz }),
+      ...feedNotices({ brief, patch, feed, board, line: model.line, split, bandwidthHz, centreHz }),
     ],
   };
 }

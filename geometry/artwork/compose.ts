@@ -9,17 +9,20 @@
 //            └──────────┴─────┴──────────┘ → x,  launch edge y = 0
 
 import type { Brief } from '../brief/brief.ts';
+import { invariant } from '../errors.ts';
 import type { PatchDesign } from '../patch/design.ts';
 import { intersection } from '../shape/boolean.ts';
 import { contourOf, disc, rectangle, reverse } from '../shape/primitives.ts';
 import { cleanRing } from '../shape/rings.ts';
 import { type Contour, type Edge, type PointNm, point, type Region, type Shape } from '../shape/shape.ts';
+import { SHORTEST_EDGE_NM } from '../shape/validate.ts';
 import { toNm } from '../units.ts';
 import type { Artwork, Dimension, Hole, LaunchEdge, Pad } from './artwork.ts';
 import { type Layout, layOut } from './layout.ts';
 import { composeLegend } from './legend-place.ts';
 import { boardOutline } from './outline.ts';
 import { slugOf } from './slug.ts';
+import { validateArtwork } from './validate.ts';
 
 /** Mask opening beyond radiator and feed [nm]: room for the mask's own misplacement, so that none lies on them. */
 const MASK_RELIEF_NM = 200_000;
@@ -66,7 +69,8 @@ function radiatorWithFeed(l: Layout): Region {
 /** Ground over the whole board, pulled back from its edge but for the launch stretch, open around a pin. */
 function ground(l: Layout): Region {
   const p = l.pullBack;
-  const radius = Math.max(0, l.cornerRadius - p);
+  // An arc too small to draw is drawn a little larger, which takes copper farther from the edge.
+  const radius = l.cornerRadius > p ? Math.max(SHORTEST_EDGE_NM, l.cornerRadius - p) : 0;
   const right = l.boardWidth - p;
   const top = l.boardLength - p;
   const edges: Edge[] = [];
@@ -243,9 +247,10 @@ export function composeArtwork(input: ComposeInput): Artwork {
     buildId,
     legend,
     reliefNm: relief,
+    registrationNm: toNm(brief.fabricator.registrationM),
     heightNm: toNm(brief.laminate.thicknessM),
   });
-  return {
+  const artwork: Artwork = {
     kind: 'artwork',
     title: brief.title,
     slug,
@@ -263,4 +268,8 @@ export function composeArtwork(input: ComposeInput): Artwork {
     dimensions: dimensionsOf(l),
     remarks: printed.remarks,
   };
+  // Sizes that no shape can have were refused above: what is left would be a fault of the drawing.
+  const [unsound] = validateArtwork(artwork);
+  invariant(unsound === undefined, `the artwork is sound: ${JSON.stringify(unsound)}`);
+  return artwork;
 }

@@ -1,9 +1,10 @@
 // A design rounded to whole nanometres and laid out on its board.
 
 import type { Brief } from '../brief/brief.ts';
-import { refuse } from '../errors.ts';
+import { EngineError, type Fault, invariant } from '../errors.ts';
 import { demandRoom } from '../patch/board-room.ts';
 import { frontEdgeM, type PatchDesign } from '../patch/design.ts';
+import { SHORTEST_EDGE_NM } from '../shape/validate.ts';
 import { toNm } from '../units.ts';
 
 /** Ground kept up to the board's edge on either side of the line: five heights, and room for a connector's legs. */
@@ -53,7 +54,8 @@ function millimetres(nm: number): string {
 }
 
 /** Rounds a design to whole nanometres.
- *  Throws: EngineError "board.small", "board.cornerRadius", "board.launch", "feed.notch" for what cannot be drawn. */
+ *  Throws: EngineError "board.small", "board.cornerRadius", "board.launch", "feed.lineWidth", "feed.notch", "feed.notchGap",
+ *  "feed.insetDepth", "feed.lineWidthInNotch" for what cannot be drawn. */
 export function layOut(brief: Brief, design: PatchDesign): Layout {
   const { radiator, feed, board } = design;
   demandRoom(radiator, frontEdgeM(feed), board, brief.fabricator.copperToEdgeM);
@@ -94,32 +96,108 @@ export function layOut(brief: Brief, design: PatchDesign): Layout {
           }
         : null,
   };
+  invariant(
+    Object.values(layout).every((value) => typeof value !== 'number' || Number.isSafeInteger(value)),
+    'a design has finite dimensions',
+  );
   demand(layout);
   return layout;
 }
 
-/** A notch or a launch that cannot be drawn is refused with the field and what would do. */
-function demand({ line, notch, boardWidth }: Layout): void {
-  if (line === null) return;
-  if (notch !== null) {
-    const outer = notch.halfLine + notch.gap;
-    if (line.half >= outer || notch.gap <= 0) {
-      refuse({
-        code: 'feed.notch',
-        path: 'feed.pinned.lineWidth',
-        value: millimetres(2 * line.half),
-        problem: `a line of ${millimetres(2 * line.half)} closes the notch, which is ${millimetres(2 * outer)} wide`,
-        allowed: `allowed is less than ${millimetres(2 * outer)}`,
-      });
-    }
+/** What cannot be drawn is refused, all of it together, with the field and what would do. */
+function demand(l: Layout): void {
+  const faults: Fault[] = [];
+  const fault = (code: string, path: string, valueNm: number, problem: string, allowed: string): void => {
+    faults.push({ code, file: '', path, value: millimetres(valueNm), problem, allowed });
+  };
+  const { line, notch, boardWidth, cornerRadius } = l;
+  const least = millimetres(SHORTEST_EDGE_NM);
+  const patchWidth = 2 * l.halfPatch;
+  if (line !== null && line.half >= l.halfPatch) {
+    fault(
+      'feed.lineWidth',
+      'feed.pinned.lineWidth',
+      2 * line.half,
+      `a line of ${millimetres(2 * line.half)} is as wide as the patch of ${millimetres(patchWidth)}`,
+      `allowed is less than ${millimetres(patchWidth)}`,
+    );
   }
-  if (line.halfLaunch < line.half) {
-    refuse({
-      code: 'board.launch',
-      path: 'board.width',
-      value: millimetres(boardWidth),
-      problem: 'the straight part of the launch edge is narrower than the feed line',
-      allowed: 'take a wider board or smaller corners',
-    });
+  if (line !== null && notch !== null) demandNotch(l, line.half, notch, fault);
+  if (line !== null && line.halfLaunch < line.half) {
+    fault(
+      'board.launch',
+      'board.width',
+      boardWidth,
+      'the straight part of the launch edge is narrower than the feed line',
+      'take a wider board or smaller corners',
+    );
+  }
+  if (cornerRadius > 0 && cornerRadius < SHORTEST_EDGE_NM) {
+    fault(
+      'board.cornerRadius',
+      'board.cornerRadius',
+      cornerRadius,
+      `corners of ${millimetres(cornerRadius)} are too small to draw`,
+      `allowed is 0 for square corners, or ${least} and more`,
+    );
+  }
+  if (faults.length > 0) throw new EngineError(faults);
+}
+
+function demandNotch(
+  l: Layout,
+  halfLine: number,
+  notch: NonNullable<Layout['notch']>,
+  fault: (code: string, path: string, valueNm: number, problem: string, allowed: string) => void,
+): void {
+  const least = millimetres(SHORTEST_EDGE_NM);
+  const outer = notch.halfLine + notch.gap;
+  const length = l.back - l.front;
+  const room = outer - halfLine;
+  if (room < SHORTEST_EDGE_NM) {
+    fault(
+      'feed.notch',
+      'feed.pinned.lineWidth',
+      2 * halfLine,
+      `a line of ${millimetres(2 * halfLine)} closes the notch, which is ${millimetres(2 * outer)} wide`,
+      `allowed is less than ${millimetres(2 * outer)}`,
+    );
+  }
+  if (notch.gap < SHORTEST_EDGE_NM) {
+    fault(
+      'feed.notchGap',
+      'feed.pinned.notchGap',
+      notch.gap,
+      `a notch gap of ${millimetres(notch.gap)} cannot be drawn`,
+      `allowed is ${least} or more`,
+    );
+  }
+  if (outer > l.halfPatch - SHORTEST_EDGE_NM) {
+    fault(
+      'feed.notchGap',
+      'feed.pinned.notchGap',
+      notch.gap,
+      `line and notch gaps take ${millimetres(2 * outer)}, the patch is ${millimetres(2 * l.halfPatch)} wide`,
+      `allowed is a gap below ${millimetres(Math.max(0, l.halfPatch - notch.halfLine))}`,
+    );
+  }
+  if (notch.depth < SHORTEST_EDGE_NM || notch.depth > length - SHORTEST_EDGE_NM) {
+    fault(
+      'feed.insetDepth',
+      'feed.pinned.insetDepth',
+      notch.depth,
+      `an inset ${millimetres(notch.depth)} deep cannot be drawn in a patch ${millimetres(length)} long`,
+      `allowed is 0 for a plain edge, or from ${least} to less than the patch is long`,
+    );
+  }
+  const step = Math.abs(notch.halfLine - halfLine);
+  if (step > 0 && step < SHORTEST_EDGE_NM) {
+    fault(
+      'feed.lineWidthInNotch',
+      'feed.pinned.lineWidthInNotch',
+      2 * notch.halfLine,
+      `the line changes its width by ${millimetres(2 * step)} at the notch, too little to draw`,
+      `allowed is ${millimetres(2 * halfLine)}, or a difference of ${millimetres(2 * SHORTEST_EDGE_NM)} and more`,
+    );
   }
 }

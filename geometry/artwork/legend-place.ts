@@ -18,6 +18,8 @@ export interface LegendWish {
   readonly legend: { readonly lineM: number; readonly heightM: number } | null;
   /** How far the mask opening reaches beyond the copper [nm]. */
   readonly reliefNm: number;
+  /** How far one print may lie astray from another [nm]. */
+  readonly registrationNm: number;
   /** Board height [nm]. */
   readonly heightNm: number;
 }
@@ -40,7 +42,7 @@ export function composeLegend(
   const height = toNm(wish.legend.heightM);
   // A rounded corner takes (1 − √½) of its radius from the diagonal.
   const edge = Math.max(l.pullBack, Math.ceil(0.3 * l.cornerRadius)) + FROM_EDGE_NM;
-  const clear = Math.max(CLEAR_OVER_HEIGHT * wish.heightNm, wish.reliefNm + pen);
+  const clear = Math.max(CLEAR_OVER_HEIGHT * wish.heightNm, wish.reliefNm + wish.registrationNm);
   const inner = { left: edge, right: l.boardWidth - edge, bottom: edge, top: l.boardLength - edge };
   const spaces: readonly Space[] = [
     ...(l.line === null
@@ -51,10 +53,14 @@ export function composeLegend(
         ]),
     { x0: inner.left, y0: l.back + clear, x1: inner.right, y1: inner.top },
   ];
-  for (const lines of [[wish.buildId, wish.slug], [wish.buildId]]) {
+  const alone = ['The margins are too narrow for the title: the legend carries the build id alone.'];
+  for (const [lines, remarks] of [
+    [[wish.buildId, wish.slug], []],
+    [[wish.buildId], alone],
+  ] as const) {
     for (const space of spaces) {
       const placed = placeIn(space, lines, height, pen);
-      if (placed !== null) return { strokes: placed, remarks: [] };
+      if (placed !== null) return { strokes: placed, remarks };
     }
   }
   return {

@@ -16,16 +16,7 @@
 import { flattenEdge } from '../shape/flatten.ts';
 import { cornersOf } from '../shape/primitives.ts';
 import { type Contour, type PointNm, point, type Shape } from '../shape/shape.ts';
-import {
-  type Circle,
-  type Corner,
-  LEAN_RAD,
-  lookAround,
-  type Medium,
-  type Side,
-  type SourceEdge,
-  sidesOf,
-} from './sight.ts';
+import { type Corner, LEAN_RAD, lookAround, type Medium, type Side, type SourceEdge, sidesOf } from './sight.ts';
 import { type Candidate, onArcs, SEARCH_CHORD_NM } from './to-arcs.ts';
 
 /** Chord error for arcs where a rule measures against a polygon [nm]. */

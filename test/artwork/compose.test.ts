@@ -1,6 +1,7 @@
 // The board as drawn: its geometry, its truths, what it refuses.
 
 import { describe, expect, it } from 'vitest';
+import type { Artwork } from '../../geometry/artwork/artwork.ts';
 import { legendText } from '../../geometry/artwork/legend.ts';
 import { slugOf } from '../../geometry/artwork/slug.ts';
 import { validateArtwork } from '../../geometry/artwork/validate.ts';
@@ -8,6 +9,7 @@ import { EngineError } from '../../geometry/errors.ts';
 import type { PatchDesign } from '../../geometry/patch/design.ts';
 import { flatten } from '../../geometry/shape/flatten.ts';
 import { areaNm2, locate, shapeBox } from '../../geometry/shape/measure.ts';
+import { rectangle, reverse } from '../../geometry/shape/primitives.ts';
 import { point } from '../../geometry/shape/shape.ts';
 import { designWith, sampleArtwork, sampleBrief, sampleDesign, sampleFabricator } from './sample.ts';
 
@@ -110,19 +112,55 @@ describe('composeArtwork', () => {
     }
   });
 
+  it('draws corners hardly rounder than the copper’s distance from the edge', () => {
+    for (const cornerRadiusM of [0.25e-3, 0.2503e-3, 0.251e-3, 0.1e-3]) {
+      const artwork = sampleArtwork(designWith({ board: { cornerRadiusM } }));
+      expect(validateArtwork(artwork), `${cornerRadiusM}`).toEqual([]);
+    }
+  });
+
+  it('validateArtwork finds what is wrong with a board, by layer', () => {
+    const artwork = sampleArtwork();
+    const codes = (change: Partial<Artwork>) =>
+      validateArtwork({ ...artwork, ...change }).map(({ code, where }) => `${where} ${code}`);
+    const beyond = [rectangle(-1_000_000, 5_000_000, 5_000_000, 9_000_000)];
+    expect(codes({ copperTop: beyond })).toEqual(['copperTop outsideProfile']);
+    expect(codes({ maskBottom: beyond })).toEqual(['maskBottom outsideProfile']);
+    expect(codes({ copperBottom: [{ outer: reverse(artwork.copperBottom[0]!.outer), holes: [] }] })).toEqual([
+      'copperBottom[0].outer orientation',
+    ]);
+    expect(codes({ legendTop: [{ points: [point(-1, 5)], widthNm: 1 }] })).toEqual(['legendTop[0] outsideProfile']);
+    expect(codes({ legendTop: [{ points: [point(1.5, 5)], widthNm: 1 }] })).toEqual(['legendTop[0] notWhole']);
+  });
+
+  it('says when the legend holds the build id alone', () => {
+    const longTitle = { ...sampleBrief, title: 'a title that is far too long for any margin of so small a board' };
+    const artwork = sampleArtwork(designWith({ board: { widthM: 40e-3 } }), longTitle);
+    expect(artwork.legendTop.length).toBeGreaterThan(10);
+    expect(artwork.remarks.join(' ')).toContain('build id alone');
+    expect(sampleArtwork().remarks).toEqual([]);
+  });
+
   it.each<[string, PatchDesign]>([
     ['board.width', designWith({ board: { widthM: 0.03 } })],
     ['board.length', designWith({ board: { lengthM: 0.04 } })],
     ['board.cornerRadius', designWith({ board: { cornerRadiusM: 0.03 } })],
     ['feed.pinned.lineWidth', designWith({ feed: { lineWidthM: 6e-3, lineWidthInNotchM: 1e-3 } })],
+    ['feed.pinned.lineWidth', designWith({ feed: { lineWidthM: 40e-3, insetDepthM: 0 } })],
+    ['feed.pinned.notchGap', designWith({ feed: { lineWidthM: 30e-3, lineWidthInNotchM: 30e-3, notchGapM: 3.5e-3 } })],
+    ['feed.pinned.notchGap', designWith({ feed: { notchGapM: 0 } })],
+    ['feed.pinned.insetDepth', designWith({ feed: { insetDepthM: 29e-3 } })],
+    ['feed.pinned.insetDepth', designWith({ feed: { insetDepthM: 0.4e-6 } })],
+    ['feed.pinned.lineWidthInNotch', designWith({ feed: { lineWidthInNotchM: 2.9804e-3 } })],
+    ['board.cornerRadius', designWith({ board: { cornerRadiusM: 0.3e-6 } })],
   ])('refuses what cannot be drawn: %s', (path, design) => {
     try {
       sampleArtwork(design);
       expect.unreachable();
     } catch (error) {
       expect(error).toBeInstanceOf(EngineError);
-      const [fault] = (error as EngineError).faults;
-      expect(fault!.path).toBe(path);
+      const fault = (error as EngineError).faults.find((one) => one.path === path);
+      expect(fault, (error as EngineError).message).toBeDefined();
       expect(fault!.allowed).not.toBe('');
     }
   });

@@ -24,10 +24,7 @@ describe('checkRules', () => {
   it('a sound board: every rule with its limit, the smallest found and the margin', () => {
     const report = check();
     expect(report.violations).toEqual([]);
-    // There are no holes: their rules have no subject.
-    const [onHoles, others] = [true, false].map((holes) => report.rules.filter((r) => (r.layer === 'drill') === holes));
-    expect(onHoles!.map(({ smallestNm }) => smallestNm)).toEqual(onHoles!.map(() => null));
-    expect(others!.map((r) => [r.rule, r.limitNm, r.smallestNm, r.marginNm])).toEqual([
+    expect(report.rules.map((r) => [r.rule, r.limitNm, r.smallestNm, r.marginNm])).toEqual([
       ['gap', 200_000, 1_000_000, 800_000],
       ['width', 200_000, 2_980_000, 2_780_000],
       ['corner', 200_000, 282_843, 82_843],
@@ -130,6 +127,18 @@ describe('checkRules', () => {
     // Without a mask only the copper counts: the same ink is 0.2 mm farther off.
     const bare = { hasSolderMask: false, maskTop: [{ outer: artwork.board.outline, holes: [] }] };
     expect(rule(withInk(upright(300_000), bare), 'legend-clearance').smallestNm).toBe(425_000);
+  });
+
+  it('on a thin laminate the legend stands as near as the shop prints true, and no nearer', () => {
+    const thin = { ...sampleBrief, laminate: { ...sampleBrief.laminate, thicknessM: 0.1e-3 } };
+    const design = designWith({ feed: { lineLengthM: 1.5e-3 }, board: { lengthM: 36.5e-3 } });
+    const report = checkRules({
+      artwork: sampleArtwork(design, thin),
+      fabricator: sampleFabricator,
+      copperBaseM: 35e-6,
+    });
+    expect(rule(report, 'legend-clearance').smallestNm).toBe(150_000);
+    expect(rule(report, 'legend-clearance').holds).toBe(true);
   });
 
   it('names the notch and the line in its sentences', () => {

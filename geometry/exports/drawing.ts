@@ -1,6 +1,7 @@
 // The fabrication drawing: the board at a stated scale with its dimensions, on a framed A4 or A3 sheet.
 
-import type { Artwork } from '../artwork/artwork.ts';
+import type { Artwork, Hole } from '../artwork/artwork.ts';
+import { disc } from '../shape/primitives.ts';
 import { type DimensionLayout, layOutDimensions } from './dimension-layout.ts';
 import { drawDimensions } from './dimension-lines.ts';
 import {
@@ -154,7 +155,30 @@ function boardItems(artwork: Artwork, placement: Placement): readonly DrawingIte
         pen: { colour: SECOND_INK, widthMm: mmFromNm(stroke.widthNm) * placement.scale, roundEnds: true },
       }),
     ),
+    ...artwork.holes.flatMap((hole) => holeItems(hole, placement)),
     { kind: 'path', paths: [outline], pen: { colour: INK, widthMm: 0.5 } },
+  ];
+}
+
+/** How far the centre lines of a hole reach beyond its wall, on paper. */
+const CENTRE_LINE_MM = 1.5;
+
+/** A hole at its finished size, with its centre lines. */
+function holeItems({ centre, finishedDiameterNm }: Hole, placement: Placement): readonly DrawingItem[] {
+  const wall = pathOfContour(disc(centre, Math.round(finishedDiameterNm / 2)), placement);
+  const reach = Math.round(finishedDiameterNm / 2 + (CENTRE_LINE_MM / placement.scale) * 1e6);
+  const line = (dx: number, dy: number): Path =>
+    polyline([
+      onSheet(placement, centre.xNm - dx, centre.yNm - dy),
+      onSheet(placement, centre.xNm + dx, centre.yNm + dy),
+    ]);
+  return [
+    { kind: 'path', paths: [wall], fill: { kind: 'solid', colour: PAPER }, pen: { colour: INK, widthMm: 0.35 } },
+    {
+      kind: 'path',
+      paths: [line(reach, 0), line(0, reach)],
+      pen: { colour: INK, widthMm: 0.15, dashMm: [2, 0.6, 0.4, 0.6] },
+    },
   ];
 }
 

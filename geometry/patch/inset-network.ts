@@ -47,35 +47,44 @@ export interface BareMode {
 
 /** Coefficients of the network. */
 export interface InsetLaw {
-  /** Spreading inductance over μ0 h/π: aspect · ln(W/w) + height · ln(h/w) + slab/εr + constant. */
+  /** Spreading inductance over μ0 h/π: aspect · ln(W/w) + shape · ln(W/1.2L) + step · ln(line/line in the notch)
+   *  + slab/εr + constant. */
   readonly spreadingAspect: number;
-  readonly spreadingHeight: number;
+  readonly spreadingShape: number;
+  readonly spreadingStep: number;
   readonly spreadingSlab: number;
   readonly spreadingConstant: number;
-  /** Share of an undivided strip's current that line and notch interrupt: (line·w + gap·g + height·h)/W. */
+  /** Share of an undivided strip's current that line and notch interrupt:
+   *  (line·w + gap·g + height·h)/W · (W/1.2L)^shape. */
   readonly shareLine: number;
   readonly shareGap: number;
   readonly shareHeight: number;
+  readonly shareShape: number;
   /** Open-end extension, quality and admittance level over those of the bare patch, as the feed sees them. */
   readonly extension: number;
   readonly quality: number;
   readonly admittance: number;
 }
 
-/** Fitted to fixtures/published/fed_reference.json: 24 cases on four boards, seven figures each. METHODS.md tells how
- *  and with which residuals; inset-range.ts holds the box. */
+/** Fitted to 131 full-wave cases on 20 boards, seven figures each. METHODS.md tells how and with which residuals;
+ *  inset-range.ts holds the box. */
 export const INSET_LAW: InsetLaw = {
-  spreadingAspect: 0.443,
-  spreadingHeight: 1.397,
-  spreadingSlab: 2.803,
-  spreadingConstant: 0.262,
-  shareLine: 1.115,
-  shareGap: 2.441,
-  shareHeight: -1.965,
-  extension: 2.046,
+  spreadingAspect: 0.34,
+  spreadingShape: 0.485,
+  spreadingStep: 0.881,
+  spreadingSlab: 0.453,
+  spreadingConstant: 0.048,
+  shareLine: 0.94,
+  shareGap: 2.586,
+  shareHeight: -1.746,
+  shareShape: -0.109,
+  extension: 1.763,
   quality: 1.09,
-  admittance: 0.925,
+  admittance: 0.947,
 };
+
+/** W/L about which the law's shape terms turn: that of the boards most of it was fitted to. */
+const USUAL_ASPECT = 1.2;
 
 /** Two rows of a 2 × 2 matrix: a b / c d. */
 interface Matrix2<T> {
@@ -218,12 +227,16 @@ export function frontEdgeImpedance(
   const widthM = depthM > 0 ? feed.lineWidthInNotchM : feed.lineWidthM;
   const gapM = feed.notchGapM * (1 - bare);
   const openShare = Math.max(0, 1 - (widthM + 2 * gapM + bare * h) / w);
-  const lineShare = Math.min(1, Math.max(0, (law.shareLine * widthM + law.shareGap * gapM + law.shareHeight * h) / w));
+  const shape = w / patch.lengthM / USUAL_ASPECT;
+  const interrupted = (law.shareLine * widthM + law.shareGap * gapM + law.shareHeight * h) / w;
+  const lineShare = Math.min(1, Math.max(0, interrupted * shape ** law.shareShape));
   const flankShare = 1 - lineShare;
+  const step = depthM > 0 ? Math.log(feed.lineWidthM / feed.lineWidthInNotchM) : 0;
   const spreading = Math.max(
     0,
     law.spreadingAspect * Math.log(w / widthM) +
-      law.spreadingHeight * Math.log(h / widthM) +
+      law.spreadingShape * Math.log(shape) +
+      law.spreadingStep * step +
       law.spreadingSlab / patch.permittivity +
       law.spreadingConstant,
   );

@@ -31,7 +31,7 @@ export function pinReactanceOhm(patch: PatchOnSlab, diameterM: number, frequency
 /** Resistance at resonance where the pin stands, a distance from the patch's centre [Ω].
  *  R = R_edge sin²(π x/L'),  L' the length with its open-end extensions: the usual law with L in place of L' is
  *  15–45 % high near the centre.
- *  Accuracy: −5…+3 % for x ≤ 0.3 L, 7 % low at 0.35 L, 11 % low at the edge, against three full-wave patches
+ *  Accuracy: 6 % for x ≤ 0.3 L, 7 % low at 0.35 L, 11 % low at the edge, against three full-wave patches
  *  (fixtures/published/input_resistance.csv, lossless). */
 export function pinResistanceOhm(edgeResistanceOhm: number, offsetM: number, extendedLengthM: number): number {
   return edgeResistanceOhm * Math.sin((Math.PI * offsetM) / extendedLengthM) ** 2;

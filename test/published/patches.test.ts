@@ -6,9 +6,11 @@ import { qualitySplit } from '../../geometry/patch/quality.ts';
 import { modePowers } from '../../geometry/patch/radiation.ts';
 import { criticalBandwidthHz, predictBare } from '../../geometry/patch/rectangular.ts';
 import {
+  campaignRows,
   fedRows,
   isInset,
   measuredRows,
+  pinRows,
   qualityRows,
   readCsv,
   resonanceRows,
@@ -199,6 +201,25 @@ describe('fed patches (fed_reference.json, computed)', () => {
   it('plain edge feeds too: best match within 0.6 %', () => {
     for (const row of rows.filter(({ depthOverLength }) => depthOverLength === 0)) {
       expect(Math.abs(row.bestMatch.error), row.name).toBeLessThan(0.006);
+    }
+  });
+});
+
+describe('fed patches of our own field solution (fixtures/computed/fed_campaign.json)', () => {
+  it('best match lies within the model error that the engine states for itself, on every board', () => {
+    const rows = campaignRows();
+    expect(rows.length).toBeGreaterThan(140);
+    for (const row of rows) expect(Math.abs(row.bestMatch.error), row.name).toBeLessThan(row.statedError);
+  });
+});
+
+describe('resistance at a pin (input_resistance.csv, computed)', () => {
+  it('within 6 % up to 0.3 of the length from the centre and 12 % everywhere; the usual law is 9 to 45 % high there', () => {
+    const rows = pinRows();
+    expect(rows).toHaveLength(27);
+    for (const row of rows) {
+      expect(Math.abs(row.error), row.name).toBeLessThan(row.offsetOverLength <= 0.3 ? 0.06 : 0.12);
+      if (row.offsetOverLength <= 0.25) expect(row.usualError, row.name).toBeGreaterThan(0.08);
     }
   });
 });

@@ -1,6 +1,16 @@
 // Prints every published row beside what the engine predicts: `npm run report`.
 
-import { fedRows, isInset, measuredRows, qualityRows, resonanceRows, summarise } from './tables.ts';
+import {
+  campaignRows,
+  type FedComparison,
+  fedRows,
+  isInset,
+  measuredRows,
+  pinRows,
+  qualityRows,
+  resonanceRows,
+  summarise,
+} from './tables.ts';
 
 function percent(error: number, digits = 2): string {
   return `${error >= 0 ? '+' : ''}${(100 * error).toFixed(digits)} %`.padStart(10);
@@ -27,20 +37,30 @@ table(
   measuredRows(),
 );
 
-print('\nFed patches (computed, fed_reference.json): errors against the reference');
-print(
-  '  case            best match   textbook      pole  loaded Q    peak R  R at match   return loss (ours / reference)',
-);
-const fed = fedRows();
-for (const row of fed) {
-  const [ours, reference] = row.returnLossDb;
+function fedTable(title: string, rows: readonly FedComparison[]): void {
+  print(`\n${title}`);
   print(
-    `  ${row.name.padEnd(14)}${percent(row.bestMatch.error)}${percent(row.textbookError)}${percent(row.pole.error)}${percent(row.loadedQuality.error, 1)}${percent(row.peakResistance.error, 1)}${percent(row.matchResistance.error, 1)}     ${ours.toFixed(1)} / ${reference.toFixed(1)} dB`,
+    '  case              best match   textbook      pole  loaded Q    peak R  R at match   return loss (ours / reference)',
+  );
+  for (const row of rows) {
+    const [ours, reference] = row.returnLossDb;
+    print(
+      `  ${row.name.padEnd(16)}${percent(row.bestMatch.error)}${percent(row.textbookError)}${percent(row.pole.error)}${percent(row.loadedQuality.error, 1)}${percent(row.peakResistance.error, 1)}${percent(row.matchResistance.error, 1)}     ${ours.toFixed(1)} / ${reference.toFixed(1)} dB`,
+    );
+  }
+  const insets = rows.filter(isInset);
+  const match = summarise(insets.map(({ bestMatch }) => bestMatch));
+  const resistance = summarise(insets.map(({ peakResistance }) => peakResistance));
+  print(
+    `  insets of 0.15–0.4 L: best match mean ${percent(match.mean)}, worst ${percent(match.worst)}; resistance mean ${percent(resistance.mean, 1)}, worst ${percent(resistance.worst, 1)}`,
   );
 }
-const insets = fed.filter(isInset);
-const match = summarise(insets.map(({ bestMatch }) => bestMatch));
-const resistance = summarise(insets.map(({ peakResistance }) => peakResistance));
-print(
-  `  insets of 0.15–0.4 L: best match mean ${percent(match.mean)}, worst ${percent(match.worst)}; resistance worst ${percent(resistance.worst, 1)}`,
-);
+
+fedTable('Fed patches (computed, fed_reference.json): errors against the reference', fedRows());
+fedTable('Fed patches (our own field solution, fed_campaign.json)', campaignRows());
+
+print('\nResistance at a pin [ohm], ours and reference (computed, input_resistance.csv), and the usual law');
+for (const row of pinRows())
+  print(
+    `  ${row.name.padEnd(20)} ${row.ours.toFixed(1).padStart(7)} ${row.reference.toFixed(1).padStart(7)} ${percent(row.error, 1)}   usual law ${percent(row.usualError, 1)}`,
+  );

@@ -11,8 +11,10 @@ import {
   impedanceAtInsetEnd,
 } from '../../geometry/patch/inset-feed.ts';
 import { insetCrossSection } from '../../geometry/patch/inset-network.ts';
+import { feedRange } from '../../geometry/patch/inset-range.ts';
 import { bestMatch, loadedPole, peakResistance, returnLossDb } from '../../geometry/patch/match.ts';
-import { qualitySplit } from '../../geometry/patch/quality.ts';
+import { effectiveSize, qualitySplit } from '../../geometry/patch/quality.ts';
+import { pinResistanceOhm } from '../../geometry/patch/size-probe.ts';
 
 function fixture(name: string): string {
   // Tests and the built report both run from the repository's root.
@@ -157,6 +159,8 @@ interface FedRow {
 export interface FedComparison {
   readonly name: string;
   readonly depthOverLength: number;
+  /** Half width of the interval that the engine states for its own error. */
+  readonly statedError: number;
   readonly bestMatch: Comparison;
   /** The textbook formula's error for the same row. */
   readonly textbookError: number;
@@ -168,56 +172,92 @@ export interface FedComparison {
   readonly returnLossDb: readonly [ours: number, reference: number];
 }
 
-/** fed_reference.json, each row's dimensions put in and predicted as a user's board would be: nothing of the
+/** A fed patch of a reference beside what a user's board of its dimensions is predicted to do: nothing of the
  *  reference's bare pole or quality is used. */
+function compareFed(row: FedRow, board: BareRow): FedComparison {
+  const laminate = {
+    name: row.board,
+    permittivity: board.er,
+    permittivityTolerance: 0,
+    lossTangent: board.tand,
+    thicknessM: board.h,
+    thicknessToleranceM: 0,
+    copperThicknessM: 0,
+    copperBaseM: 35e-6,
+    conductivitySPerM: 5.8e7,
+    roughnessM: 0,
+  };
+  const patch = { lengthM: board.L, widthM: board.W, heightM: board.h, permittivity: board.er };
+  const bare = bareResonance(patch);
+  const { resonanceHz } = bare;
+  const quality = qualitySplit(patch, board.tand, laminate, resonanceHz).total;
+  const feed: InsetFeed = {
+    kind: 'inset',
+    lineWidthM: row.lineWidth,
+    lineWidthInNotchM: row.lineWidthInNotch,
+    insetDepthM: row.insetDepth,
+    notchGapM: row.notchGap,
+    lineLengthM: row.lineLength,
+  };
+  const fed: FedPatch = {
+    patch,
+    mode: { resonanceHz, quality },
+    feed,
+    section: row.insetDepth > 0 ? crossSectionOf(laminate, board.W, feed) : insetCrossSection(patch, null),
+    line: feedLine(laminate, row.lineWidth, row.bestMatchHz),
+  };
+  const front = impedanceAtFrontEdge(fed);
+  const end = impedanceAtInsetEnd(fed);
+  const match = bestMatch(front, 50, resonanceHz);
+  const pole = loadedPole(front, 50, match.bestMatchHz, quality / 2);
+  return {
+    name: row.name,
+    depthOverLength: row.insetDepth / board.L,
+    statedError: Math.hypot(bare.modelError, feedRange(patch, feed, resonanceHz).modelError),
+    bestMatch: compare('best match', match.bestMatchHz, row.bestMatchHz),
+    textbookError: textbookResonanceHz(patch) / row.bestMatchHz - 1,
+    pole: compare('loaded pole', pole?.frequencyHz ?? Number.NaN, row.loadedPoleHz),
+    loadedQuality: compare('loaded Q', pole?.quality ?? Number.NaN, row.loadedQ),
+    peakResistance: compare('R', peakResistance(end, resonanceHz).resistanceOhm, row.peakResistanceAtInsetEndOhm),
+    matchResistance: compare('R', end({ re: row.bestMatchHz, im: 0 }).re, row.impedanceAtInsetEndAtMatch[0]),
+    returnLossDb: [returnLossDb(match.bestReflection), -row.bestMatchDb],
+  };
+}
+
+/** fed_reference.json. */
 export function fedRows(): readonly FedComparison[] {
   const data = readJson<{ bare: Record<string, BareRow>; cases: readonly FedRow[] }>('fed_reference.json');
-  return data.cases.map((row) => {
-    const board = data.bare[row.board]!;
-    const laminate = {
-      name: row.board,
-      permittivity: board.er,
-      permittivityTolerance: 0,
-      lossTangent: board.tand,
-      thicknessM: board.h,
-      thicknessToleranceM: 0,
-      copperThicknessM: 0,
-      copperBaseM: 35e-6,
-      conductivitySPerM: 5.8e7,
-      roughnessM: 0,
+  return data.cases.map((row) => compareFed(row, data.bare[row.board]!));
+}
+
+/** fixtures/computed/fed_campaign.json: our own field solution. */
+export function campaignRows(): readonly FedComparison[] {
+  const rows = readJson<readonly (FedRow & BareRow)[]>('../computed/fed_campaign.json');
+  return rows.map((row) => compareFed(row, row));
+}
+
+/** input_resistance.csv: resistance along the patch, by the engine's law and by the usual one [Ω]. */
+export function pinRows(): readonly (Comparison & {
+  readonly offsetOverLength: number;
+  readonly usualError: number;
+})[] {
+  return readCsv('input_resistance.csv').map((row) => {
+    const patch = {
+      widthM: Number(row.W_mm) / 1e3,
+      lengthM: Number(row.L_mm) / 1e3,
+      heightM: Number(row.h_mm) / 1e3,
+      permittivity: Number(row.eps_r),
     };
-    const patch = { lengthM: board.L, widthM: board.W, heightM: board.h, permittivity: board.er };
-    const resonanceHz = bareResonance(patch).resonanceHz;
-    const quality = qualitySplit(patch, board.tand, laminate, resonanceHz).total;
-    const feed: InsetFeed = {
-      kind: 'inset',
-      lineWidthM: row.lineWidth,
-      lineWidthInNotchM: row.lineWidthInNotch,
-      insetDepthM: row.insetDepth,
-      notchGapM: row.notchGap,
-      lineLengthM: row.lineLength,
-    };
-    const fed: FedPatch = {
-      patch,
-      mode: { resonanceHz, quality },
-      feed,
-      section: row.insetDepth > 0 ? crossSectionOf(laminate, board.W, feed) : insetCrossSection(patch, null),
-      line: feedLine(laminate, row.lineWidth, row.bestMatchHz),
-    };
-    const front = impedanceAtFrontEdge(fed);
-    const end = impedanceAtInsetEnd(fed);
-    const match = bestMatch(front, 50, resonanceHz);
-    const pole = loadedPole(front, 50, match.bestMatchHz, quality / 2);
+    const f = Number(row.f_res_GHz) * 1e9;
+    const split = qualitySplit(patch, Number(row.tan_d), { conductivitySPerM: null, roughnessM: 0 }, f);
+    const share = Number(row.xp_over_L_from_centre);
+    const reference = Number(row.R_fullwave_ohm);
+    const ours = pinResistanceOhm(split.edgeResistanceOhm, share * patch.lengthM, effectiveSize(patch, f).lengthM);
+    const usual = split.edgeResistanceOhm * Math.sin(Math.PI * share) ** 2;
     return {
-      name: row.name,
-      depthOverLength: row.insetDepth / board.L,
-      bestMatch: compare('best match', match.bestMatchHz, row.bestMatchHz),
-      textbookError: textbookResonanceHz(patch) / row.bestMatchHz - 1,
-      pole: compare('loaded pole', pole?.frequencyHz ?? Number.NaN, row.loadedPoleHz),
-      loadedQuality: compare('loaded Q', pole?.quality ?? Number.NaN, row.loadedQ),
-      peakResistance: compare('R', peakResistance(end, resonanceHz).resistanceOhm, row.peakResistanceAtInsetEndOhm),
-      matchResistance: compare('R', end({ re: row.bestMatchHz, im: 0 }).re, row.impedanceAtInsetEndAtMatch[0]),
-      returnLossDb: [returnLossDb(match.bestReflection), -row.bestMatchDb],
+      ...compare(`${row.id} x/L ${share}`, ours, reference),
+      offsetOverLength: share,
+      usualError: usual / reference - 1,
     };
   });
 }

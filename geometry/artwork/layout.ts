@@ -123,6 +123,7 @@ function demand(l: Layout): void {
     );
   }
   if (line !== null && notch !== null) demandNotch(l, line.half, notch, fault);
+  if (l.pin !== null) demandGroundAround(l, l.pin, fault);
   if (line !== null && line.halfLaunch < line.half) {
     fault(
       'board.launch',
@@ -142,6 +143,24 @@ function demand(l: Layout): void {
     );
   }
   if (faults.length > 0) throw new EngineError(faults);
+}
+
+/** The opening around a pin must leave ground on all sides, clear of rounded corners too. */
+function demandGroundAround(
+  l: Layout,
+  pin: PinLayout,
+  fault: (code: string, path: string, valueNm: number, problem: string, allowed: string) => void,
+): void {
+  const edge = Math.max(l.pullBack, l.cornerRadius) + SHORTEST_EDGE_NM;
+  const room = Math.min(pin.y, l.boardLength - pin.y, l.axis) - edge;
+  if (pin.clearance / 2 <= room) return;
+  fault(
+    'feed.clearance',
+    'feed.pinned.clearanceDiameter',
+    pin.clearance,
+    `an opening of ${millimetres(pin.clearance)} around the pin cuts the ground off at the board's edge`,
+    room > 0 ? `allowed is up to ${millimetres(2 * room)}, or a wider margin` : 'take a wider margin',
+  );
 }
 
 function demandNotch(

@@ -11,9 +11,18 @@ import { writeFabricationNotes } from './fabrication-notes.ts';
 import { exportGerber } from './gerber.ts';
 import { writeJob } from './job.ts';
 import { writeManifest } from './manifest.ts';
+import { exportTouchstone } from './touchstone.ts';
 
 /** Every file format of the package. A new one is a line here. */
-const EXPORTERS: readonly Exporter[] = [exportGerber, exportDrill, exportDxf, exportDrawing, exportDesign, exportBrief];
+const EXPORTERS: readonly Exporter[] = [
+  exportGerber,
+  exportDrill,
+  exportDxf,
+  exportDrawing,
+  exportTouchstone,
+  exportDesign,
+  exportBrief,
+];
 
 /** What lists the files before it; the manifest is last, for it vouches for all others. */
 const CLOSING: readonly ClosingExporter[] = [writeJob, writeFabricationNotes, writeManifest];

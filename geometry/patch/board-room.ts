@@ -54,4 +54,22 @@ export function demandRoom(
       allowed: `allowed is half the shorter side, ${millimetres(Math.min(width, length) / 2)}, or less`,
     });
   }
+  // The patch's corners may come nearer to a rounded corner of the board than to its sides.
+  const beside = (width - patchWidth) / 2;
+  const behind = length - line - patchLength;
+  const reach = (margin: number): number => Math.max(0, corner - margin);
+  if (corner > 0 && Math.max(hypot(reach(beside), reach(behind)), hypot(reach(beside), reach(line))) > corner - edge) {
+    refuse({
+      code: 'board.cornerRadius',
+      path: 'board.cornerRadius',
+      value: millimetres(corner),
+      problem: `corners of ${millimetres(corner)} cut into the patch or leave it too near to the board's edge`,
+      allowed: 'take smaller corners or a wider margin',
+    });
+  }
+}
+
+function hypot(x: number, y: number): number {
+  // One side clear of the corner is clear of it altogether.
+  return x === 0 || y === 0 ? 0 : Math.hypot(x, y);
 }

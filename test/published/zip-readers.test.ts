@@ -70,6 +70,7 @@ describe('a package', () => {
       `${slug}-legend-top.gbr`,
       `${slug}-mask-bottom.gbr`,
       `${slug}-mask-top.gbr`,
+      `${slug}-prediction.s1p`,
       `${slug}-profile.gbr`,
       `${slug}.gbrjob`,
     ];

@@ -58,7 +58,8 @@ export function demandRoom(
   const beside = (width - patchWidth) / 2;
   const behind = length - line - patchLength;
   const reach = (margin: number): number => Math.max(0, corner - margin);
-  if (corner > 0 && Math.max(hypot(reach(beside), reach(behind)), hypot(reach(beside), reach(line))) > corner - edge) {
+  const deepest = Math.max(hypot(reach(beside), reach(behind)), hypot(reach(beside), reach(line)));
+  if (deepest > 0 && deepest > corner - edge) {
     refuse({
       code: 'board.cornerRadius',
       path: 'board.cornerRadius',

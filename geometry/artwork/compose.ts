@@ -54,12 +54,12 @@ function radiatorWithFeed(l: Layout): Region {
     right.push(point(x(l.transformer.half), l.transformer.from), point(x(l.transformer.half), l.front));
   }
   if (l.notch !== null) {
-    const { halfLine, gap, depth } = l.notch;
+    const { halfLine, outer, depth } = l.notch;
     right.push(
       point(x(halfLine), l.front),
       point(x(halfLine), l.front + depth),
-      point(x(halfLine + gap), l.front + depth),
-      point(x(halfLine + gap), l.front),
+      point(x(outer), l.front + depth),
+      point(x(outer), l.front),
     );
   }
   right.push(point(x(l.halfPatch), l.front), point(x(l.halfPatch), l.back));
@@ -168,11 +168,11 @@ function dimensionsOf(l: Layout): readonly Dimension[] {
     at(name, label, 'x', point(x(-halfNm), y), point(x(halfNm), y), true);
   const feed: Dimension[] = [];
   if (l.notch !== null) {
-    const { halfLine, gap, depth } = l.notch;
+    const { halfLine, gap, outer, depth } = l.notch;
     const end = l.front + depth;
     feed.push(
-      at('insetDepth', 'inset depth', 'y', point(x(-halfLine - gap), l.front), point(x(-halfLine - gap), end), true),
-      at('notchGap', 'notch gap', 'x', point(x(halfLine), end), point(x(halfLine + gap), end), true),
+      at('insetDepth', 'inset depth', 'y', point(x(-outer), l.front), point(x(-outer), end), true),
+      at('notchGap', 'notch gap', 'x', point(x(outer - gap), l.front), point(x(outer), l.front), true),
       across('lineWidthInNotch', 'line width in the notch', halfLine, end),
     );
   }

@@ -25,10 +25,20 @@ export interface Layout {
   /** The line to the board's edge, and half the stretch over which the ground reaches that edge; null for a probe. */
   readonly line: { readonly half: number; readonly halfLaunch: number } | null;
   /** Null for a plain edge. */
-  readonly notch: { readonly halfLine: number; readonly gap: number; readonly depth: number } | null;
+  readonly notch: NotchLayout | null;
   /** Half its width, and where it begins on the way from the board's edge. */
   readonly transformer: { readonly half: number; readonly from: number } | null;
   readonly pin: PinLayout | null;
+}
+
+export interface NotchLayout {
+  /** Half the line within the notch. */
+  readonly halfLine: number;
+  /** From the line's edge, at its width outside, to the flank. */
+  readonly gap: number;
+  /** From the axis to the flank. */
+  readonly outer: number;
+  readonly depth: number;
 }
 
 export interface PinLayout {
@@ -81,7 +91,12 @@ export function layOut(brief: Brief, design: PatchDesign): Layout {
         : { half: lineHalf, halfLaunch: Math.min(wanted, axis - Math.max(pullBack, cornerRadius)) },
     notch:
       feed.kind === 'inset' && toNm(feed.insetDepthM) > 0
-        ? { halfLine: half(feed.lineWidthInNotchM), gap: toNm(feed.notchGapM), depth: toNm(feed.insetDepthM) }
+        ? {
+            halfLine: half(feed.lineWidthInNotchM),
+            gap: toNm(feed.notchGapM),
+            outer: half(feed.lineWidthM) + toNm(feed.notchGapM),
+            depth: toNm(feed.insetDepthM),
+          }
         : null,
     transformer:
       feed.kind === 'quarter-wave' ? { half: half(feed.transformerWidthM), from: toNm(feed.lineLengthM) } : null,
@@ -170,15 +185,14 @@ function demandNotch(
   fault: (code: string, path: string, valueNm: number, problem: string, allowed: string) => void,
 ): void {
   const least = millimetres(SHORTEST_EDGE_NM);
-  const outer = notch.halfLine + notch.gap;
+  const { outer } = notch;
   const length = l.back - l.front;
-  const room = outer - halfLine;
-  if (room < SHORTEST_EDGE_NM) {
+  if (outer - notch.halfLine < SHORTEST_EDGE_NM) {
     fault(
       'feed.notch',
-      'feed.pinned.lineWidth',
-      2 * halfLine,
-      `a line of ${millimetres(2 * halfLine)} closes the notch, which is ${millimetres(2 * outer)} wide`,
+      'feed.pinned.lineWidthInNotch',
+      2 * notch.halfLine,
+      `a line of ${millimetres(2 * notch.halfLine)} fills the notch, which is ${millimetres(2 * outer)} wide`,
       `allowed is less than ${millimetres(2 * outer)}`,
     );
   }
@@ -197,7 +211,7 @@ function demandNotch(
       'feed.pinned.notchGap',
       notch.gap,
       `line and notch gaps take ${millimetres(2 * outer)}, the patch is ${millimetres(2 * l.halfPatch)} wide`,
-      `allowed is a gap below ${millimetres(Math.max(0, l.halfPatch - notch.halfLine))}`,
+      `allowed is a gap below ${millimetres(Math.max(0, l.halfPatch - halfLine))}`,
     );
   }
   if (notch.depth < SHORTEST_EDGE_NM || notch.depth > length - SHORTEST_EDGE_NM) {

@@ -221,7 +221,7 @@ export const PINNED_FEED_FIELDS = {
     0,
     MAXIMUM_BOARD_M,
   ),
-  notchGap: copper('Notch gap', 'Clear space on each side of the line within the notch.'),
+  notchGap: copper('Notch gap', 'From the edge of the line, at its width outside, to the flank of the notch.'),
   lineWidth: copper('Line width', 'Of the feed line.'),
   lineWidthInNotch: copper('Line width in the notch', 'Of the feed line within the notch.'),
   lineLength: copper(

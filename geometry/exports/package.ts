@@ -11,6 +11,7 @@ import { writeFabricationNotes } from './fabrication-notes.ts';
 import { exportGerber } from './gerber.ts';
 import { writeJob } from './job.ts';
 import { writeManifest } from './manifest.ts';
+import { readBack } from './read-back/read-back.ts';
 import { exportTouchstone } from './touchstone.ts';
 
 /** Every file format of the package. A new one is a line here. */
@@ -31,7 +32,8 @@ const CLOSING: readonly ClosingExporter[] = [writeJob, writeFabricationNotes, wr
 const PORTABLE_NAME = /^[A-Za-z0-9][A-Za-z0-9.-]*$/;
 
 /** Every file of the package, by name in the order of code units; the manifest vouches for all the others.
- *  Throws (a fault of the program) when two files share a name or a name is not portable. */
+ *  Throws (a fault of the program) when two files share a name, a name is not portable, or what was written does not
+ *  read back as the artwork. */
 export async function packageFiles(input: ExportInput): Promise<readonly NamedFile[]> {
   const files: NamedFile[] = [];
   for (const write of EXPORTERS) files.push(...(await write(input)));
@@ -42,6 +44,8 @@ export async function packageFiles(input: ExportInput): Promise<readonly NamedFi
     invariant(PORTABLE_NAME.test(name), `${name} is no portable file name`);
     invariant(bytes.length > 0, `${name} is not empty`);
   }
+  const faults = readBack(files, input.artwork, input.platform);
+  invariant(faults.length === 0, `the package does not read back as the artwork: ${faults.join('; ')}`);
   return files.sort(byName);
 }
 

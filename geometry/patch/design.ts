@@ -21,7 +21,8 @@ export interface InsetFeed {
   readonly lineWidthInNotchM: number;
   /** From the patch's front edge to the end of the notch [m]; 0 is a plain edge feed. */
   readonly insetDepthM: number;
-  /** Clear space on each side of the line within the notch [m]. */
+  /** From the line's edge, as wide as it is outside, to the notch's flank [m]: a line narrowed within the notch has
+   *  more space beside it. */
   readonly notchGapM: number;
   /** From the board's edge to the patch's front edge [m]. */
   readonly lineLengthM: number;

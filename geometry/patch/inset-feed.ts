@@ -8,7 +8,13 @@ import { type Complex, complex, divide, multiply, scale, subtract, timesJ } from
 import { SPEED_OF_LIGHT_M_PER_S } from '../units.ts';
 import type { PatchOnSlab } from './bare-resonance.ts';
 import type { InsetFeed } from './design.ts';
-import { type BareMode, frontEdgeImpedance, type InsetCrossSection, insetCrossSection } from './inset-network.ts';
+import {
+  type BareMode,
+  clearanceInNotchM,
+  frontEdgeImpedance,
+  type InsetCrossSection,
+  insetCrossSection,
+} from './inset-network.ts';
 import { type ImpedanceOf, throughLine } from './match.ts';
 
 /** The feed line outside the patch, at one frequency. */
@@ -39,12 +45,12 @@ export function feedLine(laminate: Laminate, widthM: number, frequencyHz: number
 export function crossSectionOf(
   laminate: Laminate,
   patchWidthM: number,
-  feed: { readonly lineWidthInNotchM: number; readonly notchGapM: number },
+  feed: { readonly lineWidthM: number; readonly lineWidthInNotchM: number; readonly notchGapM: number },
 ): InsetCrossSection {
   const slab = { widthM: patchWidthM, heightM: laminate.thicknessM, permittivity: laminate.permittivity };
   return insetCrossSection(
     slab,
-    notchCrossSection(patchWidthM, feed.lineWidthInNotchM, feed.notchGapM, slab.heightM, slab.permittivity),
+    notchCrossSection(patchWidthM, feed.lineWidthInNotchM, clearanceInNotchM(feed), slab.heightM, slab.permittivity),
   );
 }
 

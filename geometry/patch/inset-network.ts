@@ -39,6 +39,12 @@ export interface InsetGeometry {
   readonly insetDepthM: number;
 }
 
+/** Clear space beside the line within the notch [m]. The notch is as wide as the line outside and a gap on either
+ *  side: a line that is narrowed within it has more. */
+export function clearanceInNotchM(feed: Omit<InsetGeometry, 'insetDepthM'>): number {
+  return feed.notchGapM + (feed.lineWidthM - feed.lineWidthInNotchM) / 2;
+}
+
 /** The patch without line and notch. */
 export interface BareMode {
   readonly resonanceHz: number;
@@ -47,11 +53,9 @@ export interface BareMode {
 
 /** Coefficients of the network. */
 export interface InsetLaw {
-  /** Spreading inductance over μ0 h/π: aspect · ln(W/w) + shape · ln(W/1.2L) + step · ln(line/line in the notch)
-   *  + slab/εr + constant. */
+  /** Spreading inductance over μ0 h/π: aspect · ln(W/w) + shape · ln(W/1.2L) + slab/εr + constant. */
   readonly spreadingAspect: number;
   readonly spreadingShape: number;
-  readonly spreadingStep: number;
   readonly spreadingSlab: number;
   readonly spreadingConstant: number;
   /** Share of an undivided strip's current that line and notch interrupt:
@@ -66,21 +70,20 @@ export interface InsetLaw {
   readonly admittance: number;
 }
 
-/** Fitted to 131 full-wave cases on 20 boards, seven figures each. METHODS.md tells how and with which residuals;
+/** Fitted to 213 full-wave cases on 19 boards, seven figures each. METHODS.md tells how and with which residuals;
  *  inset-range.ts holds the box. */
 export const INSET_LAW: InsetLaw = {
-  spreadingAspect: 0.34,
-  spreadingShape: 0.485,
-  spreadingStep: 0.881,
-  spreadingSlab: 0.453,
-  spreadingConstant: 0.048,
-  shareLine: 0.94,
-  shareGap: 2.586,
-  shareHeight: -1.746,
-  shareShape: -0.109,
-  extension: 1.763,
-  quality: 1.09,
-  admittance: 0.947,
+  spreadingAspect: 0.295,
+  spreadingShape: 0.57,
+  spreadingSlab: 0.444,
+  spreadingConstant: 0.126,
+  shareLine: 0.896,
+  shareGap: 2.644,
+  shareHeight: -1.666,
+  shareShape: -0.193,
+  extension: 1.952,
+  quality: 1.093,
+  admittance: 0.958,
 };
 
 /** W/L about which the law's shape terms turn: that of the boards most of it was fitted to. */
@@ -223,20 +226,19 @@ export function frontEdgeImpedance(
   const depthM = feed.insetDepthM;
   const pair = depthM > 0 ? section.pair : null;
   // How much of a notch there is: a shallow one acts like a plain edge.
-  const bare = depthM > 0 ? Math.exp(-depthM / feed.notchGapM) : 1;
+  const clearanceM = clearanceInNotchM(feed);
+  const bare = depthM > 0 ? Math.exp(-depthM / clearanceM) : 1;
   const widthM = depthM > 0 ? feed.lineWidthInNotchM : feed.lineWidthM;
-  const gapM = feed.notchGapM * (1 - bare);
+  const gapM = clearanceM * (1 - bare);
   const openShare = Math.max(0, 1 - (widthM + 2 * gapM + bare * h) / w);
   const shape = w / patch.lengthM / USUAL_ASPECT;
   const interrupted = (law.shareLine * widthM + law.shareGap * gapM + law.shareHeight * h) / w;
   const lineShare = Math.min(1, Math.max(0, interrupted * shape ** law.shareShape));
   const flankShare = 1 - lineShare;
-  const step = depthM > 0 ? Math.log(feed.lineWidthM / feed.lineWidthInNotchM) : 0;
   const spreading = Math.max(
     0,
     law.spreadingAspect * Math.log(w / widthM) +
       law.spreadingShape * Math.log(shape) +
-      law.spreadingStep * step +
       law.spreadingSlab / patch.permittivity +
       law.spreadingConstant,
   );

@@ -133,7 +133,7 @@ function frameOf(brief: Brief, pinned: PinnedInset, notices: Notice[]): Frame {
       Math.ceil(Math.max(GAP_OVER_HEIGHT * brief.laminate.thicknessM, GAP_OVER_SPACE * space) / GAP_STEP_M - 1e-9) *
         GAP_STEP_M,
     );
-  const needed = Math.max(line, inNotch + 2 * gap);
+  const needed = Math.max(line + 2 * gap, inNotch);
   if (needed >= widthM) {
     refuse({
       code: 'feed.width',
@@ -143,7 +143,20 @@ function frameOf(brief: Brief, pinned: PinnedInset, notices: Notice[]): Frame {
       allowed: 'line width plus both gaps must be less than the patch width',
     });
   }
-  const section = crossSectionOf(brief.laminate, widthM, { lineWidthInNotchM: inNotch, notchGapM: gap });
+  if (inNotch >= line + 2 * gap) {
+    refuse({
+      code: 'feed.lineWidthInNotch',
+      path: 'feed.pinned.lineWidthInNotch',
+      value: `${(inNotch * 1e3).toFixed(3)} mm`,
+      problem: `a line of ${(inNotch * 1e3).toFixed(3)} mm fills the notch, which is ${((line + 2 * gap) * 1e3).toFixed(3)} mm wide`,
+      allowed: 'allowed is less than the line width and both gaps',
+    });
+  }
+  const section = crossSectionOf(brief.laminate, widthM, {
+    lineWidthM: line,
+    lineWidthInNotchM: inNotch,
+    notchGapM: gap,
+  });
   return { brief, pinned, centreHz, widthM, lineWidthM: line, lineWidthInNotchM: inNotch, notchGapM: gap, section };
 }
 

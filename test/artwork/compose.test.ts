@@ -145,7 +145,7 @@ describe('composeArtwork', () => {
     ['board.width', designWith({ board: { widthM: 0.03 } })],
     ['board.length', designWith({ board: { lengthM: 0.04 } })],
     ['board.cornerRadius', designWith({ board: { cornerRadiusM: 0.03 } })],
-    ['feed.pinned.lineWidth', designWith({ feed: { lineWidthM: 6e-3, lineWidthInNotchM: 1e-3 } })],
+    ['feed.pinned.lineWidthInNotch', designWith({ feed: { lineWidthInNotchM: 9e-3 } })],
     ['feed.pinned.lineWidth', designWith({ feed: { lineWidthM: 40e-3, insetDepthM: 0 } })],
     ['feed.pinned.notchGap', designWith({ feed: { lineWidthM: 30e-3, lineWidthInNotchM: 30e-3, notchGapM: 3.5e-3 } })],
     ['feed.pinned.notchGap', designWith({ feed: { notchGapM: 0 } })],

@@ -3,11 +3,15 @@
 import { createHash } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
 import { validateArtwork } from '../../geometry/artwork/validate.ts';
+import { packageFiles } from '../../geometry/exports/package.ts';
 import { checkArtwork, EngineError, makeArtwork, type Platform, parseBrief, sizePatch } from '../../geometry/index.ts';
 
 const SEED = 20261201;
 /** ETCHWAVE_BRIEFS=2000 runs as many; the suite runs a sample. */
 const COUNT = Number(process.env.ETCHWAVE_BRIEFS ?? 120);
+
+/** Packages cost more than all else: every so many boards. */
+const PACKAGE_EVERY = process.env.ETCHWAVE_BRIEFS === undefined ? 4 : 1;
 
 function generator(seed: number): () => number {
   let a = seed >>> 0;
@@ -64,7 +68,7 @@ function isFiniteThroughout(value: unknown): boolean {
 }
 
 describe(`random briefs, seed ${SEED}`, () => {
-  it(`${COUNT} of them: sound boards with finite predictions, or a refusal that names field and remedy`, () => {
+  it(`${COUNT} of them: sound boards with finite predictions, or a refusal that names field and remedy`, async () => {
     const random = generator(SEED);
     let refused = 0;
     for (let i = 0; i < COUNT; i++) {
@@ -80,6 +84,10 @@ describe(`random briefs, seed ${SEED}`, () => {
         expect(validateArtwork(artwork), text).toEqual([]);
         const report = checkArtwork(brief, artwork);
         expect(isFiniteThroughout(report), text).toBe(true);
+        // Building a package reads it back and refuses one that disagrees with its artwork.
+        if (i % PACKAGE_EVERY === 0) {
+          await packageFiles({ brief, design, artwork, report, platform, version: 'test' });
+        }
       } catch (error) {
         if (!(error instanceof EngineError)) throw new Error(`${text}\n${String(error)}`, { cause: error });
         for (const fault of error.faults) {

@@ -161,6 +161,8 @@ export interface FedComparison {
   readonly depthOverLength: number;
   /** Half width of the interval that the engine states for its own error. */
   readonly statedError: number;
+  /** Whether the feed lies in the range that its law was fitted to. */
+  readonly inRange: boolean;
   readonly bestMatch: Comparison;
   /** The textbook formula's error for the same row. */
   readonly textbookError: number;
@@ -213,6 +215,7 @@ function compareFed(row: FedRow, board: BareRow): FedComparison {
   return {
     name: row.name,
     depthOverLength: row.insetDepth / board.L,
+    inRange: feedRange(patch, feed, resonanceHz).notices.length === 0,
     statedError: Math.hypot(bare.modelError, feedRange(patch, feed, resonanceHz).modelError),
     bestMatch: compare('best match', match.bestMatchHz, row.bestMatchHz),
     textbookError: textbookResonanceHz(patch) / row.bestMatchHz - 1,
